@@ -1,0 +1,47 @@
+import jsxA11y from 'eslint-plugin-jsx-a11y';
+import reactHooks from 'eslint-plugin-react-hooks';
+import tseslint from 'typescript-eslint';
+
+const PURE = ['lib/*.ts', 'lib/*/*.ts'];
+const NOT_PURE = ['lib/server/**', 'lib/http/**', '**/*.test.ts'];
+
+const IMPURE_SYNTAX = [
+  { selector: "NewExpression[callee.name='Date'][arguments.length=0]", message: 'Take `now` as an argument.' },
+  { selector: "CallExpression[callee.object.name='Date'][callee.property.name='now']", message: 'Take `now` as an argument.' },
+  { selector: "CallExpression[callee.object.name='Math'][callee.property.name='random']", message: 'Take the number as an argument.' },
+  { selector: "MemberExpression[object.name='Temporal'][property.name='Now']", message: 'Take `now` as an argument.' },
+  { selector: 'AwaitExpression', message: 'Domain code computes; it never waits.' },
+];
+
+export default tseslint.config(
+  { ignores: ['.next*/**', 'next-env.d.ts', 'var/**', 'node_modules/**', 'test-results/**'] },
+  ...tseslint.configs.recommendedTypeChecked,
+  { files: ['**/*.tsx'], ...jsxA11y.flatConfigs.recommended },
+  { files: ['**/*.{ts,tsx}'], ...reactHooks.configs.flat['recommended-latest'] },
+  {
+    languageOptions: { parserOptions: { projectService: true, tsconfigRootDir: process.cwd() } },
+    rules: {
+      'max-lines': ['error', { max: 200 }],
+      'max-lines-per-function': ['error', { max: 60, skipBlankLines: true, skipComments: true }],
+      'max-params': ['error', 4],
+      complexity: ['error', 10],
+      '@typescript-eslint/no-explicit-any': 'error',
+      '@typescript-eslint/switch-exhaustiveness-check': 'error',
+      '@typescript-eslint/consistent-type-imports': ['error', { fixStyle: 'inline-type-imports' }],
+      '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_', varsIgnorePattern: '^_' }],
+      // A transaction's callback returns promises built by Knex; async without await is how an operation keeps one signature.
+      '@typescript-eslint/require-await': 'off',
+      'no-restricted-properties': ['error', { object: 'process', property: 'env', message: 'Read lib/server/env.ts.' }],
+      'no-restricted-imports': ['error', { paths: [{ name: 'zod', importNames: ['z'], message: "Write import * as z from 'zod': the named import keeps the whole library in the browser." }] }],
+      // A form hands its async handler to the DOM; React Hook Form already catches what it throws.
+      '@typescript-eslint/no-misused-promises': ['error', { checksVoidReturn: { attributes: false } }],
+    },
+  },
+  { files: PURE, ignores: NOT_PURE, rules: { 'no-restricted-syntax': ['error', ...IMPURE_SYNTAX] } },
+  { files: ['tests/**', 'jobs/**'], rules: { 'no-restricted-properties': 'off' } },
+  {
+    files: ['**/*.test.{ts,tsx}', 'tests/**', 'db/seeds/**'],
+    rules: { 'max-lines': 'off', 'max-lines-per-function': 'off', '@typescript-eslint/no-unsafe-assignment': 'off', '@typescript-eslint/no-unsafe-member-access': 'off' },
+  },
+  { files: ['**/*.{mjs,cjs}'], extends: [tseslint.configs.disableTypeChecked] },
+);
