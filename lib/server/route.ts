@@ -1,0 +1,59 @@
+import 'server-only';
+import { NextResponse, type NextRequest } from 'next/server';
+import type * as z from 'zod';
+import { AppError, type ErrorCode } from '@/lib/errors';
+import { currentContext, type Context } from './context';
+import { assertOwnOrigin } from './origin';
+
+const STATUS: Record<ErrorCode, number> = { not_found: 404, forbidden: 403, conflict: 409, invalid: 422, too_many: 429 };
+const BODY_LIMIT_BYTES = 1024 * 1024;
+
+type Params = { params: Promise<Record<string, string | string[] | undefined>> };
+
+/** A JSON read for the browser. Same order as an action: caller, input, work, plain answer. Address parameters join the query. */
+export function readRoute<S extends z.ZodType, T>(schema: S, work: (query: z.output<S>, context: Context) => Promise<T>) {
+  return async (request: NextRequest, { params }: Params): Promise<Response> => {
+    const context = await currentContext();
+    if (!context) return refuse(401, 'Sign in first.');
+    const query = schema.safeParse({ ...Object.fromEntries(request.nextUrl.searchParams), ...(await params) });
+    if (!query.success) return refuse(400, 'The address lacks something this list needs.');
+    return answer(() => work(query.data, context));
+  };
+}
+
+/** A JSON write from a table or the calendar; ends in the same operation as a form's action. */
+export function writeRoute<S extends z.ZodType, T>(schema: S, work: (input: z.output<S>, context: Context) => Promise<T>) {
+  return async (request: NextRequest, { params }: Params): Promise<Response> => {
+    const context = await currentContext();
+    if (!context) return refuse(401, 'Sign in first.');
+    return answer(async () => {
+      assertOwnOrigin(request.headers.get('origin'));
+      const input = schema.safeParse({ ...(await readBody(request)), ...(await params) });
+      if (!input.success) throw new AppError('invalid', input.error.issues[0]?.message ?? 'This was not understood.');
+      return work(input.data, context);
+    });
+  };
+}
+
+async function readBody(request: NextRequest): Promise<Record<string, unknown>> {
+  const text = await request.text();
+  if (text.length > BODY_LIMIT_BYTES) throw new AppError('invalid', 'This is too large to send.');
+  try {
+    const body: unknown = text === '' ? {} : JSON.parse(text);
+    if (typeof body === 'object' && body !== null && !Array.isArray(body)) return body as Record<string, unknown>;
+  } catch { /* said below */ }
+  throw new AppError('invalid', 'This was not understood.');
+}
+
+async function answer<T>(work: () => Promise<T>): Promise<Response> {
+  try {
+    const result = await work();
+    return result instanceof Response ? result : NextResponse.json(result ?? {}, { headers: { 'Cache-Control': 'no-store' } });
+  } catch (error) {
+    if (error instanceof AppError) return refuse(STATUS[error.code], error.message, error.fields);
+    throw error;
+  }
+}
+
+const refuse = (status: number, message: string, fields = {}) =>
+  NextResponse.json({ message, fields }, { status, headers: { 'Cache-Control': 'no-store' } });

@@ -1,0 +1,90 @@
+import type { Actor, Allow, Role, SubjectName } from './ability';
+
+type Grant = (actor: Actor, allow: Allow) => void;
+
+/** Everything that the owner keeps in hand. Hearings are left to those who heard them: the owner reads. */
+const OWNER_MANAGES: SubjectName[] = [
+  'Account', 'Attendance', 'BusyTime', 'Consent', 'Contact', 'Enquiry', 'Enrolment', 'Excuse', 'Family', 'HealthNote', 'Import',
+  'Incident', 'Invoice', 'InvoiceShare', 'Ladder', 'LessonNote', 'Occurrence', 'Payment', 'PayLine', 'PayRun', 'Price', 'Rate',
+  'Recital', 'Refund', 'Report', 'Room', 'Scholarship', 'Seat', 'Settings', 'Student', 'Term', 'TuitionRun',
+];
+
+const DESK_MANAGES: SubjectName[] = [
+  'Attendance', 'BusyTime', 'Consent', 'Contact', 'Enquiry', 'Enrolment', 'Family', 'Invoice', 'InvoiceShare', 'Occurrence',
+  'Payment', 'Recital', 'Room', 'Seat', 'Student',
+];
+
+const grants: Record<Role, Grant> = {
+  owner: (_actor, allow) => {
+    allow('manage', OWNER_MANAGES);
+    allow('read', ['Hearing', 'Progress', 'Practice', 'Audit']);
+  },
+
+  desk: (actor, allow) => {
+    allow('manage', DESK_MANAGES);
+    allow('read', ['Price', 'Term', 'Ladder', 'HealthNote', 'TuitionRun', 'Progress']);
+    allow('read', 'Audit', { actorId: actor.personId });
+  },
+
+  teacher: (actor, allow) => {
+    const taught = { studentId: { $in: [...actor.taughtStudentIds] } };
+    allow('read', ['Room', 'Term', 'Ladder', 'BusyTime', 'Recital']);
+    const planned: Record<string, string>[] = [{ plannedTeacherId: actor.personId }, { taughtById: actor.personId }];
+    for (const mine of planned) {
+      allow('read', ['Occurrence', 'Seat'], mine);
+      allow(['read', 'create', 'update'], 'Attendance', mine);
+    }
+    allow('read', ['Progress', 'Hearing', 'Practice', 'HealthNote'], taught);
+    allow('read', 'Student', { id: { $in: [...actor.taughtStudentIds] } });
+    allow(['read', 'create', 'update'], ['LessonNote', 'Report'], taught);
+    allow('create', 'Practice', taught);
+    allow(['create', 'update'], 'Hearing', { ...taught, assessorId: actor.personId });
+    allow('read', ['PayLine', 'Rate'], { personId: actor.personId });
+    allow('update', 'PayLine', { personId: actor.personId });
+    allow('read', 'Audit', { actorId: actor.personId });
+    if (actor.isLead) grantLead(actor, allow);
+  },
+
+  student: (actor, allow) => {
+    const own = { studentId: { $in: [...actor.studentIds] } };
+    allow('read', ['Progress', 'Hearing', 'Practice', 'Report', 'Seat', 'Enrolment', 'LessonNote'], own);
+    allow('read', 'Student', { id: { $in: [...actor.studentIds] } });
+    allow('create', 'Practice', own);
+    allow('read', ['Ladder', 'Recital']);
+    allow(['read', 'update'], 'Contact', { personId: actor.personId });
+    grantPayer(actor, allow);
+  },
+
+  guardian: (actor, allow) => {
+    const child = { studentId: { $in: [...actor.studentIds] } };
+    allow('read', ['Progress', 'Hearing', 'Practice', 'Report', 'Seat', 'Enrolment', 'LessonNote'], child);
+    allow('update', 'Seat', child);
+    allow('read', 'Student', { id: { $in: [...actor.studentIds] } });
+    allow(['read', 'create', 'update'], ['HealthNote', 'Consent'], child);
+    allow(['read', 'update'], 'Contact', { personId: actor.personId });
+    allow('read', ['Ladder', 'Recital']);
+    grantPayer(actor, allow);
+  },
+};
+
+/** The lead keeps one standard: sees every student's ladder, agrees to skips and further attempts, looks after the rungs. */
+function grantLead(actor: Actor, allow: Allow): void {
+  allow('read', ['Progress', 'Hearing', 'Student', 'Occurrence', 'Seat', 'Practice']);
+  allow(['create', 'update'], 'Hearing', { assessorId: actor.personId });
+  allow('approve', ['Hearing', 'Report']);
+  allow('read', 'Report');
+  allow(['read', 'update'], 'Ladder');
+}
+
+/** Money is seen by the payer whose share it is, and by nobody else in the family. */
+function grantPayer(actor: Actor, allow: Allow): void {
+  const payer = { payerId: { $in: [...actor.payerIds] } };
+  allow('read', ['InvoiceShare', 'Payment'], payer);
+  allow('create', 'Payment', payer);
+}
+
+export function grantsOf(actor: Actor, allow: Allow): void {
+  grants[actor.role](actor, allow);
+  // Anybody may follow the slow work they asked for.
+  allow('read', 'Job', { askedByUserId: actor.userId });
+}
