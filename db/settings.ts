@@ -1,0 +1,20 @@
+import { houseRulesFrom, type HouseRuleKey, type HouseRules } from '@/lib/house-rules';
+import type { LocalDate } from '@/lib/time';
+import type { Db, Trx } from './connection';
+
+type Row = { key: string; valueJson: string };
+
+/** The house rules of a day. */
+export async function houseRulesOn(db: Db, date: LocalDate): Promise<HouseRules> {
+  const rows: Row[] = await db('setting_version').whereNull('siteId').where('validFrom', '<=', date)
+    .andWhere((query) => query.whereNull('validTo').orWhere('validTo', '>', date)).select('key', 'valueJson');
+  return houseRulesFrom(rows);
+}
+
+/** From this day on the rule has a new value; the row before it ends the day it begins. */
+export async function setHouseRule(trx: Trx, rule: { id: string; key: HouseRuleKey; value: unknown; validFrom: LocalDate; approvedBy: string | null; sourceText?: string }): Promise<void> {
+  const { value, ...row } = rule;
+  await trx('setting_version').where({ key: rule.key }).whereNull('siteId').whereNull('validTo').where('validFrom', '<', rule.validFrom).update({ validTo: rule.validFrom });
+  await trx('setting_version').where({ key: rule.key, validFrom: rule.validFrom }).whereNull('siteId').delete();
+  await trx('setting_version').insert({ ...row, valueJson: JSON.stringify(value) });
+}
