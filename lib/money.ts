@@ -98,11 +98,11 @@ function splitDecimals(text: string, digits: number): [string | null, string] {
   const mark = text.charAt(last);
   const isDecimal = digits > 0 && after.length > 0 && after.length <= digits && text.indexOf(mark) === last;
   const whole = isDecimal ? text.slice(0, last) : text;
-  if (!/^\d*$/.test(whole) && !/^\d{1,3}([.,]\d{3})+$/.test(whole)) return [null, ''];
-  if (new Set(whole.replace(/\d/g, '')).size > 1) return [null, ''];
-  if (isDecimal && whole.includes(mark)) return [null, ''];
-  return [whole.replace(/[.,]/g, ''), isDecimal ? after : ''];
+  return isGrouped(whole) ? [whole.replace(/[.,]/g, ''), isDecimal ? after : ''] : [null, ''];
 }
+
+/** Digits alone, or groups of three behind one kind of mark. */
+const isGrouped = (whole: string): boolean => /^\d*$/.test(whole) || /^\d{1,3}(?:(?:\.\d{3})+|(?:,\d{3})+)$/.test(whole);
 
 /** "1234.50" without a sign for the currency: for number fields, spreadsheets and exports. */
 export function plainAmount(amountMinor: number, currency: string): string {

@@ -10,7 +10,8 @@ export type Columns = Record<string, string>;
  * The same grants that answer "may I?" for one record, as a WHERE clause over a table. Grants only: nothing
  * here negates, so SQL's third truth value cannot let a row through.
  */
-export function allowedRows(ability: AppAbility, action: Action, name: SubjectName, alias: string, columns: Columns = {}): Where {
+export function allowedRows(ability: AppAbility, action: Action, name: SubjectName, table: string | { alias: string; columns: Columns }): Where {
+  const { alias, columns } = typeof table === 'string' ? { alias: table, columns: {} as Columns } : table;
   const where = rulesToCondition<AppAbility, Where, Where>(
     ability.rulesFor(action, name),
     (rule) => {

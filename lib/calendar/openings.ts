@@ -45,13 +45,14 @@ export function findOpenings(search: OpeningSearch, facts: Facts): { openings: O
   const openings: Opening[] = [];
   const nearMisses: NearMiss[] = [];
   for (const candidate of candidatesOf(search, facts)) {
-    const teacherFree = freeDates(candidate, search, facts.clock, candidate.teacher.busy);
+    const asking = { lengthMinutes: search.lengthMinutes, clock: facts.clock };
+    const teacherFree = freeDates(candidate, asking, candidate.teacher.busy);
     if (teacherFree.length === 0) continue;
     const rooms = facts.rooms.filter((room) => room.siteId === candidate.siteId);
-    const fitting = bestRoom(rooms.filter((room) => hasAll(room, search.features)), candidate, teacherFree, search, facts.clock);
+    const fitting = bestRoom(rooms.filter((room) => hasAll(room, search.features)), { ...candidate, free: teacherFree }, asking);
     if (fitting && candidate.overstayMinutes === 0) openings.push(openingOf(candidate, fitting, search));
     else if (fitting) nearMisses.push({ ...openingOf(candidate, fitting, search), sentence: `the family would have to stay ${candidate.overstayMinutes} minutes longer` });
-    else if (candidate.overstayMinutes === 0) nearMisses.push(...withoutFeature(rooms, candidate, teacherFree, { search, facts }));
+    else if (candidate.overstayMinutes === 0) nearMisses.push(...withoutFeature(rooms, { ...candidate, free: teacherFree }, { search, facts }));
   }
   return { openings: openings.sort(byScore), nearMisses: nearMisses.filter(({ takenDates }) => takenDates.length === 0).sort(byScore) };
 }
@@ -60,14 +61,18 @@ function* candidatesOf(search: OpeningSearch, { teachers }: Facts): Generator<Ca
   for (const teacher of teachers) {
     if (search.level < teacher.levelFrom || search.level > teacher.levelTo) continue;
     for (const span of teacher.availability) {
+      if (search.siteIds && !search.siteIds.includes(span.siteId)) continue;
       const dates = search.datesByWeekday.get(span.weekday) ?? [];
-      if (dates.length === 0 || (search.siteIds && !search.siteIds.includes(span.siteId))) continue;
-      const first = Math.ceil(span.fromMin / search.gridMinutes) * search.gridMinutes;
-      for (let startMin = first; startMin + search.lengthMinutes <= span.toMin; startMin += search.gridMinutes) {
-        const overstayMinutes = overstayOf(search, span.weekday, startMin);
-        if (overstayMinutes !== null) yield { teacher, weekday: span.weekday, startMin, siteId: span.siteId, dates, overstayMinutes };
-      }
+      if (dates.length > 0) yield* startsWithin(span, search, { teacher, weekday: span.weekday, siteId: span.siteId, dates });
     }
+  }
+}
+
+function* startsWithin(span: Window, search: OpeningSearch, rest: Omit<Candidate, 'startMin' | 'overstayMinutes'>): Generator<Candidate> {
+  const first = Math.ceil(span.fromMin / search.gridMinutes) * search.gridMinutes;
+  for (let startMin = first; startMin + search.lengthMinutes <= span.toMin; startMin += search.gridMinutes) {
+    const overstayMinutes = overstayOf(search, span.weekday, startMin);
+    if (overstayMinutes !== null) yield { ...rest, startMin, overstayMinutes };
   }
 }
 
@@ -82,8 +87,11 @@ function overstayOf({ windows, lengthMinutes }: OpeningSearch, weekday: number, 
 
 const hasAll = (room: RoomTimes, features: readonly string[]) => features.every((code) => room.features.has(code));
 
-function freeDates({ dates, startMin }: Candidate, search: OpeningSearch, clock: DayClock, busy: Busy, padMinutes = 0): LocalDate[] {
-  return dates.filter((date) => freeOn(busy, padded(clock.span(date, startMin, search.lengthMinutes), padMinutes)));
+type Asking = { lengthMinutes: number; clock: DayClock };
+type PartlyFree = Candidate & { free: readonly LocalDate[] };
+
+function freeDates({ dates, startMin }: Pick<Candidate, 'dates' | 'startMin'>, { lengthMinutes, clock }: Asking, busy: Busy, padMinutes = 0): LocalDate[] {
+  return dates.filter((date) => freeOn(busy, padded(clock.span(date, startMin, lengthMinutes), padMinutes)));
 }
 
 const padded = ({ startsAt, endsAt }: Span, minutes: number): Span => ({ startsAt, endsAt: endsAt + minutes * 60 });
@@ -91,19 +99,19 @@ const padded = ({ startsAt, endsAt }: Span, minutes: number): Span => ({ startsA
 type Fit = { room: RoomTimes; free: LocalDate[] };
 
 /** The room that is free on most of the teacher's free dates; the plainer room first, so that the grand stays free. */
-function bestRoom(rooms: readonly RoomTimes[], candidate: Candidate, teacherFree: LocalDate[], search: OpeningSearch, clock: DayClock): Fit | null {
+function bestRoom(rooms: readonly RoomTimes[], candidate: PartlyFree, asking: Asking): Fit | null {
   let best: Fit | null = null;
   for (const room of [...rooms].sort((a, b) => a.features.size - b.features.size)) {
-    const free = freeDates({ ...candidate, dates: teacherFree }, search, clock, room.busy, room.turnoverMinutes);
+    const free = freeDates({ dates: candidate.free, startMin: candidate.startMin }, asking, room.busy, room.turnoverMinutes);
     if (free.length > (best?.free.length ?? 0)) best = { room, free };
     if (best && best.free.length === candidate.dates.length) break;
   }
   return best;
 }
 
-function withoutFeature(rooms: readonly RoomTimes[], candidate: Candidate, teacherFree: LocalDate[], { search, facts }: { search: OpeningSearch; facts: Facts }): NearMiss[] {
+function withoutFeature(rooms: readonly RoomTimes[], candidate: PartlyFree, { search, facts }: { search: OpeningSearch; facts: Facts }): NearMiss[] {
   const lacking = rooms.filter((room) => search.features.filter((code) => !room.features.has(code)).length === 1);
-  const fit = bestRoom(lacking, candidate, teacherFree, search, facts.clock);
+  const fit = bestRoom(lacking, candidate, { lengthMinutes: search.lengthMinutes, clock: facts.clock });
   const missing = fit ? search.features.find((code) => !fit.room.features.has(code)) : undefined;
   if (!fit || !missing) return [];
   return [{ ...openingOf(candidate, fit, search), sentence: `no ${facts.featureLabel(missing)} in ${fit.room.name}` }];

@@ -1,6 +1,6 @@
 import 'server-only';
 import { headers } from 'next/headers';
-import * as z from 'zod';
+import type * as z from 'zod';
 import { AppError, type FieldMessages } from '@/lib/errors';
 import { requireContext, type Context } from './context';
 import { assertOwnOrigin } from './origin';

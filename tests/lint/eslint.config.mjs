@@ -13,6 +13,11 @@ const IMPURE_SYNTAX = [
   { selector: 'AwaitExpression', message: 'Domain code computes; it never waits.' },
 ];
 
+const NAMED_ZOD = {
+  selector: "ImportDeclaration[source.value='zod'] > ImportSpecifier",
+  message: "Write import * as z from 'zod': the named import keeps the whole library in the browser.",
+};
+
 export default tseslint.config(
   { ignores: ['.next*/**', 'next-env.d.ts', 'var/**', 'node_modules/**', 'test-results/**'] },
   ...tseslint.configs.recommendedTypeChecked,
@@ -32,16 +37,16 @@ export default tseslint.config(
       // A transaction's callback returns promises built by Knex; async without await is how an operation keeps one signature.
       '@typescript-eslint/require-await': 'off',
       'no-restricted-properties': ['error', { object: 'process', property: 'env', message: 'Read lib/server/env.ts.' }],
-      'no-restricted-imports': ['error', { paths: [{ name: 'zod', importNames: ['z'], message: "Write import * as z from 'zod': the named import keeps the whole library in the browser." }] }],
-      // A form hands its async handler to the DOM; React Hook Form already catches what it throws.
-      '@typescript-eslint/no-misused-promises': ['error', { checksVoidReturn: { attributes: false } }],
+      'no-restricted-syntax': ['error', NAMED_ZOD],
+      // A form hands its async handler to the DOM; React Hook Form already catches what it throws. Knex's builders are thenable in every callback.
+      '@typescript-eslint/no-misused-promises': ['error', { checksVoidReturn: { attributes: false, arguments: false } }],
     },
   },
-  { files: PURE, ignores: NOT_PURE, rules: { 'no-restricted-syntax': ['error', ...IMPURE_SYNTAX] } },
-  { files: ['tests/**', 'jobs/**'], rules: { 'no-restricted-properties': 'off' } },
+  { files: PURE, ignores: NOT_PURE, rules: { 'no-restricted-syntax': ['error', NAMED_ZOD, ...IMPURE_SYNTAX] } },
+  { files: ['tests/**', 'jobs/**', 'lib/server/env.ts', 'next.config.ts'], rules: { 'no-restricted-properties': 'off' } },
   {
-    files: ['**/*.test.{ts,tsx}', 'tests/**', 'db/seeds/**'],
-    rules: { 'max-lines': 'off', 'max-lines-per-function': 'off', '@typescript-eslint/no-unsafe-assignment': 'off', '@typescript-eslint/no-unsafe-member-access': 'off' },
+    files: ['**/*.test.{ts,tsx}', 'tests/**', 'db/seeds/**', 'jobs/up.mjs'],
+    rules: { 'max-lines': 'off', 'max-lines-per-function': 'off', complexity: 'off', '@typescript-eslint/no-unsafe-assignment': 'off', '@typescript-eslint/no-unsafe-member-access': 'off' },
   },
   { files: ['**/*.{mjs,cjs}'], extends: [tseslint.configs.disableTypeChecked] },
 );

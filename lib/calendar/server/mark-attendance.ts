@@ -13,7 +13,7 @@ import type { Context } from '@/lib/server/context';
 import { newId } from '@/lib/server/ids';
 import { assertCan } from '@/policies/ability';
 import { ATTENDANCE_WORDS, stateWhenMarked, type Attendance, type MarkedAttendance } from '../attendance';
-import { creditFor } from '../credit';
+import { creditFor, type CreditVerdict } from '../credit';
 import { absenceKind } from '../lesson-time';
 import type { markAttendanceSchema } from '../schema';
 
@@ -46,7 +46,7 @@ export async function markAttendance(input: Marking, context: Context): Promise<
       toldAt: isTold ? toldAt : null, toldById: isTold ? actor.personId : null, toldVia: isTold ? input.toldVia : null,
     });
     if (!isMarked) throw new AppError('conflict', 'Somebody else has just marked this lesson. Look again before you change it.');
-    const sentence = await settleCredit(trx, context, seat, attendance);
+    const sentence = await settleCredit(trx, seat, attendance);
     const lessonState = stateWhenMarked(await marksOfOccurrence(trx, seat.occurrenceId));
     await setOccurrenceState(trx, seat.occurrenceId, lessonState ?? 'planned');
     await recordAudit(trx, context, {
@@ -71,20 +71,29 @@ function judged(attendance: MarkedAttendance, { cancelDeadlineAt }: SeatWithLess
   return isTold && cancelDeadlineAt !== null ? absenceKind(toldAt, cancelDeadlineAt) : attendance;
 }
 
-async function settleCredit(trx: Trx, { today }: Context, seat: SeatWithLesson, attendance: MarkedAttendance): Promise<string> {
+async function settleCredit(trx: Trx, seat: SeatWithLesson, attendance: MarkedAttendance): Promise<string> {
   if (!seat.enrolmentId || seat.source !== 'roster') return '';
-  const [rules, term, existing] = [await houseRulesOn(trx, seat.localDate), await termOn(trx, seat.localDate), await creditOfSeat(trx, seat.id)];
-  if (existing && (await usedMinutes(trx, existing.id)) > 0) {
-    throw new AppError('conflict', 'The make-up credit from this lesson has been used already. The owner decides what happens.');
-  }
-  if (existing) await cancelCredit(trx, existing.id);
-  const capped = await countCappedCredits(trx, seat.enrolmentId, term?.startsOn ?? seat.localDate, term?.endsOn ?? today);
-  const { credit, sentence } = creditFor(attendance, seat.localDate, capped, { capPerTerm: rules['credit.cap_per_term'], validDays: rules['credit.valid_days'] });
+  const existing = await creditOfSeat(trx, seat.id);
+  if (existing) await takeBack(trx, existing.id);
+  const { credit, sentence } = await creditVerdict(trx, seat, seat.enrolmentId, attendance);
   if (!credit) return sentence;
   const change = { cause: credit.cause, minutes: seat.lengthMinutes, lastOn: credit.lastOn, countsToCap: credit.countsToCap ? 1 : 0 };
   if (existing) await reviveCredit(trx, existing.id, change);
   else await insertCredit(trx, { id: newId(), studentId: seat.studentId, enrolmentId: seat.enrolmentId, sourceSeatId: seat.id, bornOn: seat.localDate, state: 'live', ...change });
   return sentence;
+}
+
+async function takeBack(trx: Trx, creditId: string): Promise<void> {
+  if ((await usedMinutes(trx, creditId)) > 0) {
+    throw new AppError('conflict', 'The make-up credit from this lesson has been used already. The owner decides what happens.');
+  }
+  await cancelCredit(trx, creditId);
+}
+
+async function creditVerdict(trx: Trx, seat: SeatWithLesson, enrolmentId: string, attendance: MarkedAttendance): Promise<CreditVerdict> {
+  const [rules, term] = [await houseRulesOn(trx, seat.localDate), await termOn(trx, seat.localDate)];
+  const capped = await countCappedCredits(trx, enrolmentId, term?.startsOn ?? seat.localDate, term?.endsOn ?? seat.localDate);
+  return creditFor(attendance, seat.localDate, capped, { capPerTerm: rules['credit.cap_per_term'], validDays: rules['credit.valid_days'] });
 }
 
 /** The desk sees a student come in. It is not a mark: the teacher marks the lesson. */

@@ -1,0 +1,28 @@
+import * as z from 'zod';
+import { isZone } from '../time';
+import { passwordFault } from './passwords';
+
+const name = (what: string) => z.string().trim().min(1, `Enter ${what}.`).max(120, 'At most 120 characters.');
+const email = z.email('Enter an e-mail address like name@example.org.').max(254).transform((text) => text.toLowerCase());
+
+export const newPasswordSchema = z.string().superRefine((password, check) => {
+  const fault = passwordFault(password);
+  if (fault) check.addIssue({ code: 'custom', message: fault });
+});
+
+export const setUpSchema = z.object({
+  schoolName: name('the school’s name'),
+  siteName: name('the name of your first site'),
+  zone: z.string().refine(isZone, 'Choose a time zone from the list.'),
+  currency: z.string().regex(/^[A-Z]{3}$/, 'Choose a currency.'),
+  country: z.string().regex(/^[A-Z]{2}$/, 'Choose a country.'),
+  locale: z.string().min(2).max(20).default('en-IE'),
+  ownerName: name('your name'),
+  ownerEmail: email,
+  password: newPasswordSchema,
+});
+export type SetUpInput = z.input<typeof setUpSchema>;
+
+export const setPasswordSchema = z.object({ token: z.string().min(20).max(200), password: newPasswordSchema });
+export const resetRequestSchema = z.object({ email });
+export const switchHatSchema = z.object({ role: z.enum(['owner', 'desk', 'teacher', 'student', 'guardian']) });
