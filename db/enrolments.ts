@@ -13,6 +13,10 @@ export async function insertEnrolment(trx: Trx, enrolment: NewEnrolment): Promis
   await trx('enrolment').insert(enrolment);
 }
 
+export async function setEnrolmentSeries(trx: Trx, id: string, seriesId: string): Promise<void> {
+  await trx('enrolment').where({ id }).update({ seriesId });
+}
+
 export const LIVE_ENROLMENTS = ['active', 'paused', 'notice_given'] as const;
 export const enrolmentsOfStudent = (db: Db, studentId: string): Promise<(Enrolment & { teacherName: string | null; subjectLabel: string; weekday: number | null; startMin: number | null; roomName: string | null; siteName: string })[]> =>
   db('enrolment as e').join('subject as j', 'j.id', 'e.subjectId').join('site as w', 'w.id', 'e.siteId').leftJoin('person as p', 'p.id', 'e.teacherId')

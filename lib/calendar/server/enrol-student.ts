@@ -3,7 +3,7 @@ import type * as z from 'zod';
 import { recordAudit } from '@/db/audit';
 import type { Trx } from '@/db/connection';
 import { addEnquiryEvent, changeEnquiry, findEnquiry, trialsOfEnquiry } from '@/db/enquiries';
-import { insertEnrolment, insertSeries, recordEnrolmentChange } from '@/db/enrolments';
+import { insertEnrolment, recordEnrolmentChange, setEnrolmentSeries } from '@/db/enrolments';
 import { addStudentToFamily, familyOfStudent, insertFamily, insertPayer } from '@/db/families';
 import { lessonTypeByCode } from '@/db/lesson-types';
 import { findPerson, fullName, guardiansOf, type Person } from '@/db/people';
@@ -19,7 +19,7 @@ import { newId } from '@/lib/server/ids';
 import { assertCan } from '@/policies/ability';
 import type { enrolSchema } from '../schema';
 import { closedDatesFor, teachingDates } from '../term';
-import { placeBooking } from './place-booking';
+import { writeSeries } from './write-series';
 
 type Enrolling = z.output<typeof enrolSchema>;
 export type Enrolled = { enrolmentId: string; dates: LocalDate[]; familyId: string };
@@ -58,21 +58,17 @@ async function datesOf(input: Enrolling, term: TermRow, { db }: Context): Promis
 type Parts = { input: Enrolling; student: Person; site: Site; term: TermRow; dates: LocalDate[]; familyId: string };
 
 async function writeEnrolment(trx: Trx, context: Context, { input, student, site, term, dates, familyId }: Parts): Promise<string> {
-  const [enrolmentId, seriesId] = [newId(), newId()];
+  const enrolmentId = newId();
   const lessonType = await lessonTypeByCode(trx, 'single');
   const trial = input.enquiryId ? (await trialsOfEnquiry(trx, input.enquiryId))[0] : undefined;
   const place = { teacherId: input.teacherId, roomId: input.roomId, siteId: site.id, zone: site.zone, startMin: input.startMin, lengthMinutes: input.lengthMinutes };
-  await insertSeries(trx, {
-    ...place, id: seriesId, lessonTypeId: lessonType.id, subjectId: input.subjectId, weekday: weekdayOf(input.localDate),
-    firstOn: dates[0] ?? input.localDate, lastOn: dates.at(-1) ?? input.localDate, termId: term.id,
-  });
   await insertEnrolment(trx, {
-    id: enrolmentId, studentId: student.id, familyId, subjectId: input.subjectId, lessonTypeId: lessonType.id, seriesId, lengthMinutes: input.lengthMinutes,
+    id: enrolmentId, studentId: student.id, familyId, subjectId: input.subjectId, lessonTypeId: lessonType.id, seriesId: null, lengthMinutes: input.lengthMinutes,
     teacherId: input.teacherId, siteId: site.id, tuitionModel: 'per_term_count', unitPriceMinor: null, startsOn: dates[0] ?? input.localDate, endsOn: null,
     state: 'active', trialId: trial?.id ?? null, acceptedAt: context.now, termsVersion: 'school-terms', createdBy: context.actor.personId,
   });
-  const facts = { ...place, lessonType, subjectId: input.subjectId, level: input.level, title: '', studentIds: [student.id], mode: 'in_room' as const };
-  for (const localDate of dates) await placeBooking(trx, context, { ...facts, localDate, seriesId, enrolmentId, source: 'roster' });
+  const plan = { ...place, lessonType, subjectId: input.subjectId, level: input.level, title: '', termId: term.id, dates, seats: [{ studentId: student.id, enrolmentId }] };
+  await setEnrolmentSeries(trx, enrolmentId, await writeSeries(trx, context, plan, { checked: true }));
   await recordEnrolmentChange(trx, { id: newId(), enrolmentId, kind: 'start', effectiveOn: dates[0] ?? input.localDate, before: null, after: place, byId: context.actor.personId, at: context.now });
   await recordAudit(trx, context, {
     action: 'enrol', tableName: 'enrolment', rowId: enrolmentId, after: { ...place, dates },

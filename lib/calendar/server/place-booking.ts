@@ -12,7 +12,7 @@ import { cancelDeadlineOf, spanOf } from '../lesson-time';
 import { clashesWith, type BookingWish } from './booking-rules';
 
 export type SeatSource = NewSeat['source'];
-export type Placement = BookingWish & { seriesId?: string | null; enrolmentId?: string | null; source: SeatSource };
+export type Placement = BookingWish & { seriesId?: string | null; enrolmentOf?: ReadonlyMap<string, string>; source: SeatSource };
 export type Placed = { id: string; span: Span; notes: Clash[] };
 
 /** Which hard rules the caller may pass over, with a reason recorded elsewhere: an import brings lessons as they are. */
@@ -38,7 +38,7 @@ export async function writeBooking(trx: Trx, { actor }: Pick<Context, 'actor'>, 
     localDate: wish.localDate, startMin: wish.startMin, lengthMinutes: wish.lengthMinutes, zone: wish.zone, siteId: wish.siteId, roomId: wish.roomId,
     plannedTeacherId: wish.teacherId, mode: wish.mode, cancelDeadlineAt: cancelDeadlineOf(wish), createdBy: actor.personId,
   });
-  await insertSeats(trx, wish.studentIds.map((studentId) => ({ id: newId(), occurrenceId: id, studentId, enrolmentId: wish.enrolmentId ?? null, source: wish.source })));
+  await insertSeats(trx, wish.studentIds.map((studentId) => ({ id: newId(), occurrenceId: id, studentId, enrolmentId: wish.enrolmentOf?.get(studentId) ?? null, source: wish.source })));
   await takeHolds(trx, id, wish, span);
   return { id, span };
 }
