@@ -12,6 +12,9 @@ export const HOUSE_RULES = {
   'cancel.days_before': { label: 'Days before a lesson by which an absence must be told', schema: z.number().int().min(0).max(14), value: 1 },
   'credit.cap_per_term': { label: 'Make-up credits a family may earn per enrolment and term', schema: z.number().int().min(0).max(50), value: 2 },
   'credit.valid_days': { label: 'Days within which a make-up lesson must take place', schema: z.number().int().min(1).max(730), value: 60 },
+  'tuition.discount_mode': { label: 'Discounts one after the other, or the best one only', schema: z.enum(['one_after_other', 'best_only']), value: 'one_after_other' },
+  'tuition.month_rule': { label: 'How a month that is joined part-way is charged', schema: z.enum(['by_lessons', 'by_days', 'half_month']), value: 'by_lessons' },
+  'tuition.due_days': { label: 'Days from the invoice to its due date', schema: z.number().int().min(0).max(120), value: 14 },
   'hearing.wait_days': { label: 'Days before a rung may be heard again', schema: z.number().int().min(0).max(60), value: 7 },
   'hearing.attempts_per_term': { label: 'Attempts at a rung in a term before the lead must agree', schema: z.number().int().min(1).max(20), value: 2 },
 } as const;

@@ -20,6 +20,7 @@ export type TaxRule = { taxClass: string; treatment: Treatment; rateBp: number; 
 export type BillFacts = {
   lines: readonly DraftLine[];
   discountRules: readonly DiscountRule[]; awards: readonly Award[]; discountMode: DiscountMode;
+  billedBefore?: readonly GrossLine[];
   taxRules: readonly TaxRule[]; taxMode: 'inclusive' | 'exclusive';
   splitRules: readonly SplitRule[]; defaultPayerId: string;
   plan: InstalmentPlan; words: MoneyWords;
@@ -59,11 +60,11 @@ export function buildBill(facts: BillFacts): Bill {
   return { lines, taxGroups, netMinor, taxMinor, totalMinor, shares, steps: totals.steps };
 }
 
-function discountsOf({ lines, discountRules, awards, discountMode, words }: BillFacts): { netMinor: number; steps: DiscountStep[] }[] {
+function discountsOf({ lines, discountRules, awards, discountMode, billedBefore, words }: BillFacts): { netMinor: number; steps: DiscountStep[] }[] {
   const gross = lines.flatMap((line, index): GrossLine[] =>
     line.isDiscountable && line.studentId ? [{ key: String(index), studentId: line.studentId, grossMinor: line.grossMinor }] : []);
   const keyed = awards.map((award) => ({ ...award, lineKey: award.lineKey === null ? null : String(lines.findIndex(({ enrolmentId }) => enrolmentId === award.lineKey)) }));
-  const results = new Map(discountLines(gross, discountRules, keyed, { mode: discountMode, words }).map((line) => [line.key, line]));
+  const results = new Map(discountLines(gross, discountRules, keyed, { mode: discountMode, words, billedBefore }).map((line) => [line.key, line]));
   return lines.map((line, index) => results.get(String(index)) ?? { netMinor: line.grossMinor, steps: [] });
 }
 

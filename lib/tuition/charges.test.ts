@@ -24,7 +24,7 @@ describe('what a period charges', () => {
   });
   it('names the lessons', () => {
     const facts = enrolment({});
-    expect(chargeText(facts, { quantity: 2, unitMinor: 4200, grossMinor: 8400 })).toBe('Ada: Voicings, single lesson 30 min, 2 lessons');
+    expect(chargeText(facts, { quantity: 2, unitMinor: 4200, grossMinor: 8400 })).toBe('Ada: Voicings, 30 min single lesson, 2 lessons');
   });
   it('plans over the whole period, without closed days', () => {
     const period = { startsOn: '2026-10-01', endsOn: '2026-10-31' };

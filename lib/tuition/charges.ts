@@ -53,10 +53,12 @@ export const plannedDatesOf = (lessonDates: readonly LocalDate[], period: Term, 
   [...new Set(lessonDates.map(weekdayOf))].flatMap((weekday) => teachingDates(weekday, period, closed)).sort();
 
 export const chargeText = (facts: EnrolmentFacts, charge: Charge): string => {
-  const what = `${facts.studentName}: ${facts.subjectLabel}, ${facts.lessonLabel.toLowerCase()} ${facts.lengthMinutes} min`;
+  const what = `${facts.studentName}: ${facts.subjectLabel}, ${lessonWords(facts)}`;
   if (facts.model === 'monthly_flat') return `${what}, monthly fee`;
   return facts.model === 'per_term_flat' ? `${what}, term fee` : `${what}, ${plural(charge.quantity, 'lesson')}`;
 };
 
+const lessonWords = ({ lessonLabel, lengthMinutes }: EnrolmentFacts) => `${lengthMinutes} min ${lessonLabel.toLowerCase()}`;
+
 export const missingPriceText = (facts: EnrolmentFacts): string =>
-  `There is no price for ${facts.lessonLabel.toLowerCase()} ${facts.lengthMinutes} min, which ${facts.studentName} has.`;
+  `There is no price for a ${lessonWords(facts)}, which ${facts.studentName} has.`;

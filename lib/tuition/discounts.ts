@@ -17,11 +17,18 @@ export type DiscountStep = {
 };
 export type DiscountedLine = GrossLine & { netMinor: number; steps: DiscountStep[] };
 
+export type DiscountManner = {
+  mode: DiscountMode; words: MoneyWords;
+  /** Lines of the same family and period that were billed before: they count for the ranking and keep their own discounts. */
+  billedBefore?: readonly GrossLine[];
+};
+
 /** House rule HR4 (S14): the automatic discounts in their order, then the scholarship, each on what the one before left, each rounded. */
-export function discountLines(lines: readonly GrossLine[], rules: readonly DiscountRule[], awards: readonly Award[], how: { mode: DiscountMode; words: MoneyWords }): DiscountedLine[] {
+export function discountLines(lines: readonly GrossLine[], rules: readonly DiscountRule[], awards: readonly Award[], how: DiscountManner): DiscountedLine[] {
+  const ranked = [...(how.billedBefore ?? []), ...lines];
   const inOrder = [...rules].sort((a, b) => a.orderNo - b.orderNo);
   return lines.map((line) => {
-    const fitting = inOrder.filter((rule) => qualifies(rule, line, lines));
+    const fitting = inOrder.filter((rule) => qualifies(rule, line, ranked));
     const automatic = how.mode === 'best_only' ? bestOf(fitting) : fitting;
     const award = awards.filter(({ studentId, lineKey }) => studentId === line.studentId && (lineKey === null || lineKey === line.key));
     const steps: DiscountStep[] = [];
