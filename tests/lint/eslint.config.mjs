@@ -43,7 +43,7 @@ export default tseslint.config(
     },
   },
   { files: PURE, ignores: NOT_PURE, rules: { 'no-restricted-syntax': ['error', NAMED_ZOD, ...IMPURE_SYNTAX] } },
-  { files: ['tests/**', 'jobs/**', 'lib/server/env.ts', 'next.config.ts'], rules: { 'no-restricted-properties': 'off' } },
+  { files: ['tests/**', 'jobs/**', 'lib/server/env.ts', 'next.config.ts', 'proxy.ts'], rules: { 'no-restricted-properties': 'off' } },
   {
     files: ['**/*.test.{ts,tsx}', 'tests/**', 'db/seeds/**', 'jobs/up.mjs'],
     rules: { 'max-lines': 'off', 'max-lines-per-function': 'off', complexity: 'off', '@typescript-eslint/no-unsafe-assignment': 'off', '@typescript-eslint/no-unsafe-member-access': 'off' },
