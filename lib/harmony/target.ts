@@ -10,30 +10,43 @@ export type Register = { lowest: KeyNumber; highest: KeyNumber };
 export type Target = { chord: Chord; notes: VoicedNote[] };
 
 const WHOLE_KEYBOARD: Register = { lowest: LOWEST_KEY, highest: HIGHEST_KEY };
+/** A stack spans less than three octaves, so one whose root stands higher leaves the keyboard anyway. */
+const HIGHEST_ROOT_OCTAVE = 6;
 
-/**
- * The lowest place of a stack in a register. `rootRegister` says where the root itself (played or only thought)
- * may lie, for rungs that fix the bass; otherwise every key of the voicing must lie inside.
- */
-export function placeStack(root: NoteName, stack: readonly Degree[], place: { register?: Register; rootRegister?: Register }): VoicedNote[] | null {
-  const register = place.register ?? WHOLE_KEYBOARD;
-  for (let octave = 0; octave <= 7; octave += 1) {
-    const low = `${root}${octave}`;
-    if (place.rootRegister && !isInside([keyOf(low)], place.rootRegister)) continue;
-    const notes = stackOn(low, stack);
-    if (isInside(notes.map((note) => note.key), register)) return notes;
+export type Place = {
+  /** Every key must lie inside. */
+  register?: Register;
+  /** The root, played or only thought, must lie inside: for voicings that stand on it. */
+  rootRegister?: Register;
+  /** The top key must lie inside: for voicings that are led by their top. */
+  topRegister?: Register;
+};
+
+/** Every place of a stack on the keyboard that its registers allow, from the lowest up. */
+export function placementsOf(root: NoteName, stack: readonly Degree[], { register, rootRegister, topRegister }: Place): VoicedNote[][] {
+  const found: VoicedNote[][] = [];
+  for (let octave = 0; octave <= HIGHEST_ROOT_OCTAVE; octave += 1) {
+    const notes = stackOn(`${root}${octave}`, stack);
+    const fits = isInside(notes.map(({ key }) => key), register ?? WHOLE_KEYBOARD)
+      && isInside([keyOf(`${root}${octave}`)], rootRegister ?? WHOLE_KEYBOARD)
+      && isInside([notes.at(-1)?.key ?? 0], topRegister ?? WHOLE_KEYBOARD);
+    if (fits) found.push(notes);
   }
-  return null;
+  return found;
 }
 
 const isInside = (keys: readonly KeyNumber[], { lowest, highest }: Register): boolean => keys.every((key) => key >= lowest && key <= highest);
 
-export type Asked = { symbol: string; stack?: string; register?: Register; rootRegister?: Register };
+export type Asked = Place & { symbol: string; stack?: string };
 
-/** @throws when the stack cannot lie in the register: the product's own data is then wrong, not the player. */
-export function targetOf({ symbol, stack, register, rootRegister }: Asked): Target {
+/**
+ * A chord to be played: with a stack in its lowest place, without one in any voicing.
+ *
+ * @throws when the stack cannot lie in the register: the product's own data is then wrong, not the player.
+ */
+export function targetOf({ symbol, stack, ...place }: Asked): Target {
   const chord = chordOf(symbol);
-  const notes = stack === undefined ? [] : placeStack(chord.root, degreesOf(stack), { register, rootRegister });
+  const notes = stack === undefined ? [] : placementsOf(chord.root, degreesOf(stack), place)[0];
   if (!notes) throw new Error(`${symbol} as ${stack} does not fit its register`);
   return { chord, notes };
 }

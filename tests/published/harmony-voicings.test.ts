@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { chordOf } from '@/lib/harmony/chord';
 import { degreesOf, semitonesOf, stackOn, type Degree } from '@/lib/harmony/degree';
 import { splitHands } from '@/lib/harmony/hands';
-import { placeStack } from '@/lib/harmony/target';
+import { placementsOf } from '@/lib/harmony/target';
 import { essentialDegrees, tensionUse } from '@/lib/harmony/tones';
 import golden from './data/harmony-golden.json';
 
@@ -44,12 +44,22 @@ describe('constant shapes (CALC)', () => {
 
 describe('place in a register', () => {
   it('takes the root register of the rung', () => {
-    expect(placeStack('G', degreesOf('1-b7-3-13-9'), { rootRegister: { lowest: 41, highest: 52 } })?.map(({ key }) => key)).toEqual([43, 53, 59, 64, 69]);
-    expect(placeStack('D', degreesOf('b3-5-b7-9'), { register: { lowest: 50, highest: 69 } })?.map(({ key }) => key)).toEqual([53, 57, 60, 64]);
+    const places = (root: string, stack: string, place: Parameters<typeof placementsOf>[2]) => placementsOf(root, degreesOf(stack), place).map((notes) => notes.map(({ key }) => key));
+    expect(places('G', '1-b7-3-13-9', { rootRegister: { lowest: 41, highest: 52 } })).toEqual([[43, 53, 59, 64, 69]]);
+    expect(places('D', 'b3-5-b7-9', { register: { lowest: 50, highest: 69 } })).toEqual([[53, 57, 60, 64]]);
   });
   it('answers nothing when a voicing does not fit', () => {
-    expect(placeStack('C', degreesOf('1-b7-3-13-9'), { register: { lowest: 60, highest: 70 } })).toBeNull();
+    expect(placementsOf('C', degreesOf('1-b7-3-13-9'), { register: { lowest: 60, highest: 70 } })).toEqual([]);
   });
+});
+
+// TER: Terefenko, Jazz Theory, p. 47 (definition of drop 2); LilyPond's \\dropNote 2 returned the same sets.
+it.each([
+  ['C', '5-1-3-7', 60, [55, 60, 64, 71]], ['C', '7-3-5-1', 60, [59, 64, 67, 72]], ['C', '1-5-7-3', 60, [60, 67, 71, 76]], ['C', '3-7-1-5', 60, [64, 71, 72, 79]],
+  ['D', '5-1-b3-b7', 60, [57, 62, 65, 72]], ['B', 'b3-b7-1-b5', 81, [74, 81, 83, 89]],
+] as const)('drop 2 on %s, %s with the top from key %i up', (root, stack, lowest, keys) => {
+  const found = placementsOf(root, degreesOf(stack), { topRegister: { lowest, highest: lowest + 29 } }).map((notes) => notes.map(({ key }) => key));
+  expect(found).toContainEqual([...keys]);
 });
 
 describe('hands (CALC, table a7: no hand passes an octave)', () => {

@@ -1,0 +1,95 @@
+import { chordName, type ChordStyle } from '../harmony/chord-name';
+import { chordOf, spelledMembers } from '../harmony/chord';
+import { degreesOf, printedDegree, type Degree, type VoicedNote } from '../harmony/degree';
+import { judge } from '../harmony/judge';
+import { printedNote, type NoteName } from '../harmony/note';
+import { placementsOf, targetName, type Target } from '../harmony/target';
+import { tensionUse } from '../harmony/tones';
+import type { Verdict } from '../harmony/verdict';
+import { chordRoot, keyLabel, writtenKey } from './keys';
+import type { AskedChord, PlaySpec } from './play-spec';
+
+/** One cell of the grid of keys: the key, and which of the rung's turns is asked in it. */
+export type DrawnKey = { key: NoteName; turn: number };
+
+/** One chord that is asked. `shown` is the voicing on the stave; any of `accepts` counts. */
+export type Ask = { symbol: string; shown: Target; accepts: Target[]; answer: string | null };
+
+/**
+ * The chords of a drawn key, in order. Where a chord may be voiced in several ways or octaves, the shown path is
+ * the one whose voices move least in all.
+ */
+export function asksOf(spec: PlaySpec, { key, turn }: DrawnKey): Ask[] {
+  const asked = spec.turns[turn];
+  if (!asked) throw new Error(`the rung has no turn ${turn}`);
+  const written = writtenKey(key, asked);
+  const symbols = asked.map((chord) => chordRoot(written, chord) + chord.suffix);
+  if (spec.how !== 'voicing') return symbols.map((symbol) => unvoiced(spec, symbol));
+  const options = asked.map((chord, at) => optionsOf(symbols[at] ?? '', chord));
+  const path = nearestPath(options);
+  return symbols.map((symbol, at) => {
+    const chord = chordOf(symbol);
+    const accepts = (options[at] ?? []).map((notes): Target => ({ chord, notes }));
+    return { symbol, shown: { chord, notes: path[at] ?? [] }, accepts, answer: null };
+  });
+}
+
+function optionsOf(symbol: string, asked: AskedChord): VoicedNote[][] {
+  const options = asked.stacks.flatMap((stack) => placementsOf(chordOf(symbol).root, degreesOf(stack), asked));
+  if (options.length === 0) throw new Error(`${symbol} fits nowhere in its register`);
+  return options;
+}
+
+function unvoiced(spec: PlaySpec, symbol: string): Ask {
+  const target: Target = { chord: chordOf(symbol), notes: [] };
+  return { symbol, shown: target, accepts: [target], answer: spokenAnswer(spec, target) };
+}
+
+/** Semitones that all voices move between two chords of the same size, paired from the bottom up. */
+export const movement = (from: readonly VoicedNote[], to: readonly VoicedNote[]): number =>
+  from.reduce((sum, { key }, at) => sum + Math.abs(key - (to[at]?.key ?? key)), 0);
+
+type Path = { notes: VoicedNote[][]; cost: number };
+
+function nearestPath(options: readonly VoicedNote[][][]): VoicedNote[][] {
+  let paths: Path[] = (options[0] ?? []).map((notes) => ({ notes: [notes], cost: 0 }));
+  for (const next of options.slice(1)) {
+    paths = next.map((notes) => {
+      const reached = paths.map((path) => ({ notes: [...path.notes, notes], cost: path.cost + movement(path.notes.at(-1) ?? [], notes) }));
+      return cheapest(reached);
+    });
+  }
+  return cheapest(paths).notes;
+}
+
+const cheapest = (paths: readonly Path[]): Path => paths.reduce((best, path) => (path.cost < best.cost ? path : best));
+
+/** Hears played keys against every voicing that counts; the verdict is against the one they come nearest to. */
+export function judgeAsk({ accepts, shown }: Ask, played: readonly number[]): Verdict {
+  const right = accepts.map((target) => judge(target, played)).find((verdict) => verdict.isRight);
+  if (right) return right;
+  const inCommon = ({ notes }: Target) => notes.filter(({ key }) => played.includes(key)).length;
+  return judge(accepts.reduce((best, target) => (inCommon(target) > inCommon(best) ? target : best), shown), played);
+}
+
+const ASKED_TENSIONS: readonly Degree[] = ['9', '11', '13'];
+
+/** What the teacher wants to hear at a rung that is told and not played. */
+function spokenAnswer({ how }: PlaySpec, { chord }: Target): string | null {
+  if (how === 'spell') return spelledMembers(chord).map(printedNote).join('  ');
+  if (how !== 'name_tensions') return null;
+  const uses = ASKED_TENSIONS.map((degree) => ({ degree, use: tensionUse(chord, degree) }));
+  const list = (use: string) => uses.filter((tension) => tension.use === use).map(({ degree }) => printedDegree(degree)).join(' and ');
+  const [careful, out] = [list('caution'), list('avoid')];
+  return `${list('available')} may be added${careful && `, ${careful} with care`}${out && `; ${out} is left out`}.`;
+}
+
+/** "Dm11": the heading of the hearing, without octaves and with the school's signs. */
+export const askName = ({ shown }: Ask, style: ChordStyle): string => targetName(shown, style);
+/** "1 11 ♭7 ♭3 5". */
+export const askDegrees = ({ shown }: Ask): string => shown.notes.map(({ degree }) => printedDegree(degree)).join(' ');
+
+export function drawnLabel(spec: PlaySpec, { key, turn }: DrawnKey, style: ChordStyle): string {
+  const { isWholeChord, text } = keyLabel(spec, key, spec.turns[turn] ?? []);
+  return isWholeChord ? chordName(chordOf(text), style) : text;
+}
