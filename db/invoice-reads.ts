@@ -15,9 +15,9 @@ export const invoicesOfFamily = (db: Db, familyId: string): Promise<InvoiceHead[
 /** Newest first; the screen filters and sorts what it was given. */
 export const recentInvoices = (db: Db, limit: number): Promise<InvoiceHead[]> => heads(db).orderBy('i.issuedOn', 'desc').orderBy('i.sequenceNo', 'desc').limit(limit);
 
-export type LineRow = { id: string; invoiceId: string; lineNo: number; chargeKind: string; text: string; quantity: number; unitMinor: number; grossMinor: number; netMinor: number; taxMinor: number; taxTreatment: string; taxBp: number; explainJson: string };
+export type LineRow = { id: string; invoiceId: string; lineNo: number; chargeKind: string; text: string; quantity: number; unitMinor: number; grossMinor: number; netMinor: number; taxMinor: number; taxTreatment: string; taxBp: number; explainJson: string; studentId: string | null };
 export const linesOfInvoice = (db: Db, invoiceId: string): Promise<LineRow[]> =>
-  db<LineRow>('invoice_line').where({ invoiceId }).orderBy('lineNo').select('id', 'invoiceId', 'lineNo', 'chargeKind', 'text', 'quantity', 'unitMinor', 'grossMinor', 'netMinor', 'taxMinor', 'taxTreatment', 'taxBp', 'explainJson');
+  db<LineRow>('invoice_line').where({ invoiceId }).orderBy('lineNo').select('id', 'invoiceId', 'lineNo', 'chargeKind', 'text', 'quantity', 'unitMinor', 'grossMinor', 'netMinor', 'taxMinor', 'taxTreatment', 'taxBp', 'explainJson', 'studentId');
 
 export type TaxRow = { treatment: 'taxed' | 'zero' | 'exempt'; rateBp: number; netMinor: number; taxMinor: number; reason: string };
 export const taxOfInvoice = (db: Db, invoiceId: string): Promise<TaxRow[]> => db<TaxRow & { invoiceId: string }>('invoice_tax').where({ invoiceId }).select('treatment', 'rateBp', 'netMinor', 'taxMinor', 'reason');
