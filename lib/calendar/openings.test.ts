@@ -2,7 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import expected from '@/tests/published/data/scenarios-expected.json';
 import { overlaps, type LocalDate, type Span } from '../time';
-import { dayClock, freeOn, sortedBusy } from './busy';
+import { dayClock, freeOn, sortedBusy, type Busy } from './busy';
 import { findOpenings, type OpeningSearch, type RoomTimes, type TeacherTimes } from './openings';
 
 const ZONE = 'America/New_York';
@@ -10,7 +10,7 @@ const clock = dayClock(ZONE);
 const at = (hhmm: string): number => Number(hhmm.slice(0, 2)) * 60 + Number(hhmm.slice(3));
 const TUESDAY: LocalDate = '2026-09-15';
 const THURSDAY: LocalDate = '2026-09-17';
-const busy = (...spans: [LocalDate, string, string][]): Span[] => sortedBusy(spans.map(([date, from, to]) => clock.span(date, at(from), at(to) - at(from))));
+const busy = (...spans: [LocalDate, string, string][]): Busy => sortedBusy(spans.map(([date, from, to]) => clock.span(date, at(from), at(to) - at(from))));
 const window = (weekday: number, from: string, to: string) => ({ weekday, fromMin: at(from), toMin: at(to) });
 
 describe('S02 finding an opening', () => {

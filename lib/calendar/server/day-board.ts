@@ -8,7 +8,7 @@ import { assertCan } from '@/policies/ability';
 
 export type BoardSeat = Pick<SeatRow, 'id' | 'studentId' | 'studentName' | 'attendance' | 'rowVersion' | 'source'> & { hasArrived: boolean };
 export type BoardLesson = Pick<Occurrence, 'id' | 'title' | 'startMin' | 'lengthMinutes' | 'startsAt' | 'endsAt' | 'roomId' | 'roomName' | 'siteName' |
-  'plannedTeacherId' | 'teacherName' | 'teacherColour' | 'coverName' | 'lessonTypeCode' | 'lessonTypeLabel' | 'state' | 'mode'> & { seats: BoardSeat[] };
+  'plannedTeacherId' | 'taughtById' | 'teacherName' | 'teacherColour' | 'coverName' | 'lessonTypeCode' | 'lessonTypeLabel' | 'state' | 'mode'> & { seats: BoardSeat[] };
 export type BoardRoom = { id: string; name: string; description: string; siteId: string; siteName: string };
 export type DayBoard = {
   date: LocalDate; rooms: BoardRoom[]; lessons: BoardLesson[]; openFromMin: number; openToMin: number; closure: string | null;
@@ -46,6 +46,6 @@ const boardSeat = ({ id, studentId, studentName, attendance, rowVersion, arrived
 
 const boardLesson = (o: Occurrence, seats: BoardSeat[]): BoardLesson => ({
   id: o.id, title: o.title, startMin: o.startMin, lengthMinutes: o.lengthMinutes, startsAt: o.startsAt, endsAt: o.endsAt, roomId: o.roomId, roomName: o.roomName,
-  siteName: o.siteName, plannedTeacherId: o.plannedTeacherId, teacherName: o.teacherName, teacherColour: o.teacherColour, coverName: o.coverName,
+  siteName: o.siteName, plannedTeacherId: o.plannedTeacherId, taughtById: o.taughtById, teacherName: o.teacherName, teacherColour: o.teacherColour, coverName: o.coverName,
   lessonTypeCode: o.lessonTypeCode, lessonTypeLabel: o.lessonTypeLabel, state: o.state, mode: o.mode, seats,
 });
