@@ -22,7 +22,7 @@ export function BoardBlock({ lesson, fromMin, now, onOpen }: { lesson: BoardLess
     <button
       type="button" data-block={lesson.id} onClick={() => onOpen(lesson)} style={blockStyle(lesson, fromMin)}
       aria-label={`${clockOf(lesson.startMin)}, ${title}, ${blockDetail(lesson)}, ${lesson.roomName ?? ''}${state ? `, ${state.word}` : ''}`}
-      className={`absolute inset-x-1 overflow-hidden rounded-[3px] border-l-4 px-2 py-[3px] text-left leading-[1.3] hover:brightness-[.98] focus-visible:z-10 ${colour}`}
+      className={`absolute inset-x-1 flex flex-col items-stretch justify-start overflow-hidden rounded-[3px] border-l-4 px-2 py-[3px] text-left leading-[1.3] hover:brightness-[.98] focus-visible:z-10 ${colour}`}
     >
       <span className="flex items-start justify-between gap-1">
         <span className="min-w-0 truncate text-[13.5px] font-semibold">{title}</span>

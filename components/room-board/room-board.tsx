@@ -13,10 +13,10 @@ export function RoomBoard({ board, siteId, now, onOpen }: RoomBoardProps) {
   const { fromMin, toMin, hours } = boardHours(board.lessons, board.openFromMin, board.openToMin);
   const rooms = roomsOfSite(board.rooms, siteId);
   const grid = useRef<HTMLDivElement>(null);
-  const columns = { gridTemplateColumns: `54px repeat(${rooms.length}, minmax(150px, 1fr))` };
+  const columns = { gridTemplateColumns: `54px repeat(${rooms.length}, minmax(var(--room-width), 1fr))` };
   return (
     <div className="sheet overflow-x-auto" tabIndex={-1}>
-      <div className="min-w-fit" role="group" aria-label="Room board">
+      <div className="min-w-fit [--room-width:150px] md:[--room-width:122px]" role="group" aria-label="Room board">
         <div className="sticky top-0 z-20 grid border-b border-rule-strong bg-sheet" style={columns}>
           <span />
           {rooms.map(({ id, name, description }) => (
