@@ -169,6 +169,7 @@ CREATE TABLE hearing (
   note_public TEXT NOT NULL DEFAULT '',
   note_private TEXT NOT NULL DEFAULT '',
   stopped_reason TEXT NOT NULL DEFAULT '',
+  started_on TEXT NOT NULL,
   decided_at INTEGER,
   decided_on TEXT,
   -- The first day on which it may be heard again after "not yet".
@@ -202,7 +203,7 @@ WHEN NOT EXISTS (
   JOIN rung_text t ON t.rung_id = NEW.rung_id AND t.edition_id = NEW.edition_id
   JOIN level v ON v.id = t.level_id JOIN ladder_edition e ON e.id = t.edition_id AND e.ladder_id = l.id
   WHERE q.person_id = NEW.assessor_id AND v.no BETWEEN q.level_from AND q.level_to
-  AND q.granted_on <= date(NEW.created_at, 'unixepoch', '+1 day') AND (q.ends_on IS NULL OR q.ends_on >= date(NEW.created_at, 'unixepoch', '-1 day')))
+  AND q.granted_on <= NEW.started_on AND (q.ends_on IS NULL OR q.ends_on >= NEW.started_on))
 BEGIN SELECT RAISE(ABORT, 'assessor_not_qualified'); END;
 
 -- What was asked and what was played, key by key: the proof behind an outcome.
