@@ -8,7 +8,8 @@ import { Dialog } from '@/components/ui/dialog';
 import type { BoardLesson, BoardSeat } from '@/lib/calendar/server/day-board';
 import { formatTimeRange } from '@/lib/format';
 import type { LocalDate } from '@/lib/time';
-import { AttendanceButtons } from './attendance-buttons';
+import { AttendanceButtons } from '@/components/attendance/attendance-buttons';
+import { mark } from '../actions';
 import { CheckInButton } from './check-in-button';
 
 type LessonDrawerProps = { lesson: BoardLesson; date: LocalDate; onClose: () => void };
@@ -35,7 +36,7 @@ function SeatRow({ seat, onChange }: { seat: BoardSeat; onChange: () => void }) 
         <Link href={`/students/${seat.studentId}`} className="font-semibold text-ink">{seat.studentName}</Link>
         {seat.attendance === 'expected' ? <CheckInButton seat={seat} onChange={onChange} /> : null}
       </div>
-      <AttendanceButtons seat={seat} onChange={onChange} />
+      <AttendanceButtons mark={mark} seat={seat} onChange={onChange} />
     </li>
   );
 }

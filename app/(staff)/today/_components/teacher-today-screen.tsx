@@ -11,7 +11,8 @@ import { useNow } from '@/components/ui/use-now';
 import type { TeacherDay, TeacherLesson } from '@/lib/calendar/server/teacher-day';
 import { formatTimeRange, plural } from '@/lib/format';
 import { addDays } from '@/lib/time';
-import { AttendanceButtons } from './attendance-buttons';
+import { AttendanceButtons } from '@/components/attendance/attendance-buttons';
+import { mark } from '../actions';
 import type { Heading } from './desk-today-screen';
 
 export function TeacherTodayScreen({ day, heading, now }: { day: TeacherDay; heading: Heading; now: number }) {
@@ -56,7 +57,7 @@ function LessonItem({ lesson, isNow, onChange }: { lesson: TeacherLesson; isNow:
             <Link href={`/students/${seat.studentId}`} className="text-lead font-semibold text-ink">{seat.studentName}</Link>
             <ButtonLink kind="brass" href={`/hearings/${seat.studentId}?lesson=${lesson.id}`}>Hear a rung</ButtonLink>
           </div>
-          <AttendanceButtons seat={seat} onChange={onChange} />
+          <AttendanceButtons mark={mark} seat={seat} onChange={onChange} />
         </div>
       ))}
       {lesson.seats.length === 0 ? <p className="text-ink-3">{lesson.title || lesson.lessonTypeLabel}</p> : null}

@@ -5,17 +5,17 @@ import { toast } from 'sonner';
 import { Chip } from '@/components/ui/chip';
 import { ATTENDANCE_WORDS, CONSEQUENCES, type MarkedAttendance } from '@/lib/calendar/attendance';
 import type { BoardSeat } from '@/lib/calendar/server/day-board';
-import { mark } from '../actions';
+import type { MarkAction } from './mark-action';
 
 const FIRST: { attendance: MarkedAttendance; label: string }[] = [
   { attendance: 'present', label: 'Here' }, { attendance: 'late', label: 'Late' }, { attendance: 'away_with_notice', label: 'Away' }, { attendance: 'no_show', label: 'Did not come' },
 ];
 const MORE: { attendance: MarkedAttendance; label: string }[] = [{ attendance: 'online', label: 'Joined online' }, { attendance: 'left_early', label: 'Left early' }, { attendance: 'teacher_away', label: 'Teacher away' }];
 
-type AttendanceButtonsProps = { seat: Pick<BoardSeat, 'id' | 'attendance' | 'rowVersion' | 'studentName'>; onChange: () => void };
+type AttendanceButtonsProps = { mark: MarkAction; seat: Pick<BoardSeat, 'id' | 'attendance' | 'rowVersion' | 'studentName'>; onChange: () => void };
 
 /** One press marks the lesson; what follows from it is said at once. The deadline decides whether "away" was told in time. */
-export function AttendanceButtons({ seat, onChange }: AttendanceButtonsProps) {
+export function AttendanceButtons({ mark, seat, onChange }: AttendanceButtonsProps) {
   const [pending, startTransition] = useTransition();
   const [local, setLocal] = useState<{ attendance: BoardSeat['attendance']; rowVersion: number } | null>(null);
   const shown = local && local.rowVersion > seat.rowVersion ? local : { attendance: seat.attendance, rowVersion: seat.rowVersion };
