@@ -67,6 +67,8 @@ export const proofsOf = async (db: Db, hearingId: string): Promise<Proof[]> =>
   (await db<ProofRow>('proof').where({ hearingId }).orderBy(['drawnNo', 'tryNo']).select<ProofRow[]>('id', 'hearingId', 'drawnNo', 'tryNo', 'heardJson', 'isHeard', 'source', 'judgeVersion', 'at')).map(toProof);
 
 export const lastTries = (proofs: readonly Proof[]): Map<number, Proof> => new Map(proofs.map((proof) => [proof.drawnNo, proof]));
+/** Keys that count by the teacher's ear alone. */
+export const countByEar = (proofs: readonly Proof[]): number => [...lastTries(proofs).values()].filter(({ isHeard, source }) => isHeard && source === 'ear').length;
 export const countHeard = (proofs: readonly Proof[]): number => [...lastTries(proofs).values()].filter(({ isHeard }) => isHeard).length;
 
 /** How each key went at this rung before, for the weight of the next draw. */

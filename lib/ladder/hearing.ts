@@ -36,9 +36,15 @@ export function isKeyHeard(chords: readonly HeardChord[], asked: number, criteri
   return chords.length === asked && right >= asked - criteria.slipsPerTurn;
 }
 
-/** Not heard enough keys? A pass then needs the teacher's reason in words. */
-export function passProblem(keysHeard: number, keysNeeded: number, reason: string): string | null {
-  if (keysHeard >= keysNeeded || reason.trim() !== '') return null;
+export type KeyCount = { heard: number; /** of these, by the teacher's ear alone although the rung is played */ byEar: number; needed: number };
+
+/**
+ * Not heard enough keys, or enough only by ear? A pass then needs the teacher's reason in words: what stands in
+ * place of the stored notes.
+ */
+export function passProblem({ heard: keysHeard, byEar, needed: keysNeeded }: KeyCount, reason: string): string | null {
+  if (reason.trim() !== '' || keysHeard - byEar >= keysNeeded) return null;
+  if (keysHeard >= keysNeeded) return `${plural(byEar, 'key was', 'keys were')} heard by ear, without stored notes. Say in a few words how it was heard, then it passes.`;
   return `${keysHeard} of the ${plural(keysNeeded, 'key')} needed ${keysHeard === 1 ? 'is' : 'are'} heard. Hear more, or say in words why it passes all the same.`;
 }
 

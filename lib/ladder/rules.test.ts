@@ -90,9 +90,11 @@ describe('hearing', () => {
     expect(isKeyHeard([chord(), chord()], 3, { ...criteria, slipsPerTurn: 1 })).toBe(false);
   });
   it('a pass needs enough keys or a reason in words', () => {
-    expect(passProblem(10, 10, '')).toBeNull();
-    expect(passProblem(8, 10, '  ')).toContain('8 of the 10 keys needed are heard');
-    expect(passProblem(8, 10, 'The other two were played last week.')).toBeNull();
+    expect(passProblem({ heard: 10, byEar: 0, needed: 10 }, '')).toBeNull();
+    expect(passProblem({ heard: 12, byEar: 2, needed: 10 }, '')).toBeNull();
+    expect(passProblem({ heard: 8, byEar: 0, needed: 10 }, '  ')).toContain('8 of the 10 keys needed are heard');
+    expect(passProblem({ heard: 10, byEar: 1, needed: 10 }, '')).toContain('1 key was heard by ear');
+    expect(passProblem({ heard: 8, byEar: 0, needed: 10 }, 'The other two were played last week.')).toBeNull();
   });
   it('decided is for good', () => {
     expect(mayMove('decided', 'played')).toBe(false);

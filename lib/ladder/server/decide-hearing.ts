@@ -2,7 +2,7 @@ import 'server-only';
 import type * as z from 'zod';
 import { recordAudit } from '@/db/audit';
 import type { Trx } from '@/db/connection';
-import { countHeard, decide, insertScores, proofsOf, stop, type Hearing } from '@/db/hearings';
+import { countByEar, countHeard, decide, insertScores, proofsOf, stop, type Hearing } from '@/db/hearings';
 import { rebuildStudentRungs } from '@/db/ladder-standing';
 import { findRung, type Rung } from '@/db/ladders';
 import { findPerson, fullName, type Person } from '@/db/people';
@@ -12,7 +12,8 @@ import { AppError, notFound } from '@/lib/errors';
 import type { Context } from '@/lib/server/context';
 import { newId } from '@/lib/server/ids';
 import type { LocalDate } from '@/lib/time';
-import { earliestRehearing, mayMove, OUTCOME_WORDS, passProblem } from '../hearing';
+import { earliestRehearing, mayMove, OUTCOME_WORDS, passProblem, type KeyCount } from '../hearing';
+import { isSpoken } from '../play-spec';
 import { weightedScore, type WeightedScore } from '../score';
 import type { decideHearingSchema, stopHearingSchema } from '../schema';
 import { ownHearing } from './record-proof';
@@ -32,8 +33,10 @@ export async function decideHearing(input: Deciding, context: Context): Promise<
     const hearing = await ownHearing(trx, input.hearingId, context);
     const [rung, student] = [await findRung(trx, hearing.editionId, hearing.rungId), await findPerson(trx, hearing.studentId)];
     if (!rung || !student) throw notFound('hearing');
-    const keysHeard = countHeard(await proofsOf(trx, hearing.id));
-    const totalHundredths = assertDecidable(input, hearing, { rung, keysHeard });
+    const proofs = await proofsOf(trx, hearing.id);
+    const keysHeard = countHeard(proofs);
+    const count: KeyCount = { heard: keysHeard, needed: rung.keysNeeded, byEar: isSpoken(rung.spec.how) ? 0 : countByEar(proofs) };
+    const totalHundredths = assertDecidable(input, hearing, count);
     const waitDays = (await houseRulesOn(trx, today))['hearing.wait_days'];
     const earliestAgainOn = input.outcome === 'not_yet' ? earliestRehearing(today, waitDays) : null;
     await insertScores(trx, input.marks.map((mark) => ({ id: newId(), hearingId: hearing.id, ...mark })));
@@ -46,11 +49,11 @@ export async function decideHearing(input: Deciding, context: Context): Promise<
   });
 }
 
-function assertDecidable(input: Deciding, hearing: Hearing, facts: { rung: Rung; keysHeard: number }): number | null {
+function assertDecidable(input: Deciding, hearing: Hearing, count: KeyCount): number | null {
   if (!mayMove(hearing.state, 'decided')) throw new AppError('conflict', 'This hearing is decided already. What was decided stays.');
   const score = input.marks.length > 0 ? scoreOf(input.marks) : null;
   if (input.outcome === 'not_yet') assertHasNote(input);
-  else assertPassStands(input, facts, score);
+  else assertPassStands(input, count, score);
   return score?.totalHundredths ?? null;
 }
 
@@ -58,9 +61,9 @@ function assertHasNote({ notePublic }: Deciding): void {
   if (notePublic === '') throw new AppError('invalid', 'Say in a few words what to work on; the family reads it.', { notePublic: ['What comes next?'] });
 }
 
-function assertPassStands({ passReason }: Deciding, { rung, keysHeard }: { rung: Rung; keysHeard: number }, score: WeightedScore | null): void {
+function assertPassStands({ passReason }: Deciding, count: KeyCount, score: WeightedScore | null): void {
   const isBelowLine = score !== null && !score.isPassed && passReason === '';
-  const problem = passProblem(keysHeard, rung.keysNeeded, passReason) ?? (isBelowLine ? (score.steps.at(-1) ?? null) : null);
+  const problem = passProblem(count, passReason) ?? (isBelowLine ? (score.steps.at(-1) ?? null) : null);
   if (problem) throw new AppError('invalid', problem, { passReason: [problem] });
 }
 

@@ -36,13 +36,13 @@ async function onLevelFour() {
 type Deciding = Parameters<typeof decideHearing>[0];
 const decision = (over: Pick<Deciding, 'hearingId' | 'outcome'> & Partial<Deciding>): Deciding => ({ passReason: '', notePublic: '', notePrivate: '', marks: [], ...over });
 
-async function play(db: Knex, hearingId: string, drawnNo: number, change: (keys: number[]) => number[] = (keys) => keys, now = NOW) {
+async function play(db: Knex, hearingId: string, drawnNo: number, change: (keys: number[]) => number[] = (keys) => keys) {
   const hearing = await findHearing(db, hearingId);
   const rung = hearing && (await findRung(db, hearing.editionId, hearing.rungId));
   const drawn = hearing?.drawn[drawnNo];
   if (!rung || !drawn) throw new Error('no such key');
   const heard = asksOf(rung.spec, drawn).map((ask) => ({ played: change(ask.shown.notes.map(({ key }) => key)), milliseconds: 1400, byEar: null }));
-  return recordProof({ hearingId, drawnNo, source: 'midi', heard }, greta(db, now));
+  return recordProof({ hearingId, drawnNo, source: 'midi', heard }, greta(db));
 }
 
 describe('install', () => {
@@ -144,7 +144,7 @@ describe('proof', () => {
     expect(late).toMatchObject({ isHeard: false });
     expect(late.heard[0]?.verdict?.isRight).toBe(true);
   });
-  it('a spoken rung takes the teacher\'s word, a played one the keys', async () => {
+  it('a spoken rung takes the teacher\'s word', async () => {
     const { db, rungId } = await house();
     const { hearingId } = await startHearing({ studentId: 'ines', rungId: rungId('1.1'), leadReason: '' }, greta(db));
     const told = { hearingId, drawnNo: 0, source: 'ear' as const };
@@ -169,6 +169,19 @@ async function heardTen() {
   for (let drawnNo = 0; drawnNo < 10; drawnNo += 1) await play(db, hearingId, drawnNo);
   return { db, rungId, hearingId };
 }
+
+describe('heard by ear at a piano without MIDI', () => {
+  it('counts, says so in the proof, and a pass then needs words', async () => {
+    const { db, rungId } = await onLevelFour();
+    const { hearingId } = await startHearing({ studentId: 'ines', rungId: rungId('4.2'), leadReason: '' }, greta(db));
+    const heard = [{ played: [], milliseconds: null, byEar: 'right' as const }];
+    for (let drawnNo = 0; drawnNo < 10; drawnNo += 1) await recordProof({ hearingId, drawnNo, source: 'ear', heard }, greta(db));
+    await expect(recordProof({ hearingId, drawnNo: 10, source: 'midi', heard }, greta(db))).rejects.toThrow('cannot be overruled');
+    expect((await proofsOf(db, hearingId))[0]).toMatchObject({ source: 'ear', heard: [{ byEar: 'right', verdict: null }] });
+    await expect(decideHearing(decision({ hearingId, outcome: 'passed' }), greta(db))).rejects.toMatchObject({ message: expect.stringContaining('10 keys were heard by ear') as string });
+    await expect(decideHearing(decision({ hearingId, outcome: 'passed', passReason: 'At the grand in the hall, all ten clean.' }), greta(db))).resolves.toMatchObject({ keysHeard: 10 });
+  });
+});
 
 describe('decide', () => {
   it('passes when enough keys were heard, tells the guardian who sees progress, and opens what follows', async () => {

@@ -29,7 +29,8 @@ export async function ownHearing(db: Db, hearingId: string, { ability }: Pick<Co
 
 /**
  * Stores what was played for one drawn key and judges it here, whatever the screen thought: the proof is what the
- * keys say. A key may be tried again; every try is kept and the last one counts.
+ * keys say. At a piano without MIDI the teacher's ear takes their place, and the proof says so. A key may be tried
+ * again; every try is kept and the last one counts.
  */
 export async function recordProof(input: Playing, context: Context): Promise<Recorded> {
   return transaction(context.db, async (trx) => {
@@ -58,8 +59,9 @@ function judged(input: Playing, hearing: Hearing, rung: Rung): { heard: HeardCho
   const heard = input.heard.map(({ played, milliseconds, byEar }, at): HeardChord => {
     const ask = asks[at];
     if (!ask) throw new AppError('invalid', 'More chords were played than asked.');
-    if (spoken !== (byEar !== null)) throw new AppError('invalid', spoken ? 'This rung is told, not played: say whether it was right.' : 'This rung is played: the keys decide.');
-    return { symbol: ask.symbol, played, milliseconds, byEar, verdict: spoken ? null : judgeAsk(ask, played) };
+    if (spoken && byEar === null) throw new AppError('invalid', 'This rung is told, not played: say whether it was right.');
+    if (byEar !== null && input.source !== 'ear') throw new AppError('invalid', 'What the keys told cannot be overruled by ear; decide the hearing with a reason instead.');
+    return { symbol: ask.symbol, played, milliseconds, byEar, verdict: byEar === null ? judgeAsk(ask, played) : null };
   });
   return { heard, isHeard: isKeyHeard(heard, asks.length, rung.criteria) };
 }
