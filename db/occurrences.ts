@@ -67,3 +67,13 @@ export type NewSeat = { id: string; occurrenceId: string; studentId: string; enr
 export async function insertSeats(trx: Trx, seats: NewSeat[]): Promise<void> {
   for (let at = 0; at < seats.length; at += 100) await trx('seat').insert(seats.slice(at, at + 100));
 }
+
+export type BusyTime = Span & { id: string; startMin: number; lengthMinutes: number };
+/** That somebody or some room is taken, without by whom or for what. */
+export const busyTimes = (db: Db, span: Span, of: { teacherId: string | null; roomId: string | null }): Promise<BusyTime[]> =>
+  db('occurrence as o').where('o.startsAt', '<', span.endsAt).where('o.startsAt', '>', span.startsAt - 86_400).where('o.endsAt', '>', span.startsAt).whereIn('o.state', LIVE_STATES)
+    .modify((query) => {
+      if (of.teacherId) query.whereRaw('coalesce(o.taught_by_id, o.planned_teacher_id) = ?', [of.teacherId]);
+      if (of.roomId) query.where('o.roomId', of.roomId);
+    })
+    .select<BusyTime[]>('o.id', 'o.startsAt', 'o.endsAt', 'o.startMin', 'o.lengthMinutes');

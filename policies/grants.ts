@@ -52,6 +52,8 @@ const grants: Record<Role, Grant> = {
     allow('create', 'Practice', own);
     allow('read', ['Ladder', 'Recital']);
     allow(['read', 'update'], 'Contact', { personId: actor.personId });
+    // Who pays for themselves is of age and cancels for themselves; a minor asks a guardian.
+    if (actor.payerIds.length > 0) allow('update', 'Seat', own);
     grantPayer(actor, allow);
   },
 

@@ -73,3 +73,25 @@ export const markAttendanceSchema = z.object({
 });
 export const spanQuerySchema = z.object({ from: z.coerce.number().int(), until: z.coerce.number().int() });
 export const dayQuerySchema = z.object({ date: localDateSchema });
+export const calendarQuerySchema = spanQuerySchema.extend({ teacherId: z.string().max(64).optional(), roomId: z.string().max(64).optional() });
+
+const clockSchema = z.string().regex(/^\d{1,2}:\d{2}$/, 'Enter a time like 16:30.');
+/** One booking made by hand: a lesson of a student, or a rehearsal, rental, tuning or meeting without one. */
+export const bookSchema = z.object({
+  lessonTypeCode: z.enum(['single', 'make_up', 'rehearsal', 'rental', 'tuning', 'meeting']),
+  title: z.string().trim().max(120, 'At most 120 characters.').default(''),
+  studentId: z.string().max(64).nullable().default(null),
+  teacherId: z.string().max(64).nullable().default(null),
+  roomId: z.string('Choose a room.').min(1, 'Choose a room.').max(64),
+  localDate: localDateSchema,
+  start: clockSchema,
+  lengthMinutes: z.number('Enter the minutes.').int('Whole minutes.').min(5, 'At least 5 minutes.').max(720, 'At most 12 hours.'),
+});
+export type BookInput = z.input<typeof bookSchema>;
+
+/** An enquiry that the desk takes down on the telephone. */
+export const deskEnquirySchema = enquirySchema.omit({ mayWrite: true, website: true }).extend({
+  contactEmail: z.union([z.literal(''), z.email('Enter an e-mail address like name@example.org.')]).default(''),
+  levelGuess: z.number().int().min(1).max(20).default(1),
+}).refine(({ contactEmail, contactPhone }) => contactEmail !== '' || contactPhone !== '', { path: ['contactPhone'], message: 'Enter an e-mail address or a telephone number.' });
+export type DeskEnquiryInput = z.input<typeof deskEnquirySchema>;

@@ -1,21 +1,15 @@
 import 'server-only';
 import type * as z from 'zod';
 import { recordAudit } from '@/db/audit';
-import { cancelCredit, countCappedCredits, creditOfSeat, insertCredit, reviveCredit, usedMinutes } from '@/db/credits';
-import type { Trx } from '@/db/connection';
-import { setOccurrenceState } from '@/db/occurrences';
-import { findSeat, markSeat, marksOfOccurrence, setArrived, type SeatWithLesson } from '@/db/seats';
-import { houseRulesOn } from '@/db/settings';
-import { termOn } from '@/db/terms';
+import { findSeat, setArrived, type SeatWithLesson } from '@/db/seats';
 import { transaction } from '@/db/transaction';
 import { AppError, notFound } from '@/lib/errors';
 import type { Context } from '@/lib/server/context';
-import { newId } from '@/lib/server/ids';
 import { assertCan } from '@/policies/ability';
-import { ATTENDANCE_WORDS, stateWhenMarked, type Attendance, type MarkedAttendance } from '../attendance';
-import { creditFor, type CreditVerdict } from '../credit';
+import { ATTENDANCE_WORDS, type Attendance, type MarkedAttendance } from '../attendance';
 import { absenceKind } from '../lesson-time';
 import type { markAttendanceSchema } from '../schema';
+import { recordMark, settleCredit } from './record-mark';
 
 type Marking = z.output<typeof markAttendanceSchema>;
 export type Marked = { attendance: Attendance; rowVersion: number; sentence: string; lessonState: 'taught' | 'not_taught' | null };
@@ -41,14 +35,11 @@ export async function markAttendance(input: Marking, context: Context): Promise<
   const attendance = judged(input.attendance, seat, toldAt);
   return transaction(db, async (trx) => {
     const isTold = attendance === 'away_with_notice' || attendance === 'late_notice';
-    const isMarked = await markSeat(trx, seat.id, input.rowVersion, {
+    const lessonState = await recordMark(trx, seat, {
       attendance, minutesLate: attendance === 'late' ? (input.minutesLate ?? 0) : null, markedById: actor.personId, markedAt: now,
       toldAt: isTold ? toldAt : null, toldById: isTold ? actor.personId : null, toldVia: isTold ? input.toldVia : null,
-    });
-    if (!isMarked) throw new AppError('conflict', 'Somebody else has just marked this lesson. Look again before you change it.');
+    }, input.rowVersion);
     const sentence = await settleCredit(trx, seat, attendance);
-    const lessonState = stateWhenMarked(await marksOfOccurrence(trx, seat.occurrenceId));
-    await setOccurrenceState(trx, seat.occurrenceId, lessonState ?? 'planned');
     await recordAudit(trx, context, {
       action: 'mark', tableName: 'seat', rowId: seat.id, before: { attendance: seat.attendance }, after: { attendance },
       sentence: `Marked ${seat.studentName} on ${seat.localDate}: ${ATTENDANCE_WORDS[attendance]}.`,
@@ -69,31 +60,6 @@ function assertMarkable(seat: SeatWithLesson, attendance: MarkedAttendance, now:
 function judged(attendance: MarkedAttendance, { cancelDeadlineAt }: SeatWithLesson, toldAt: number): MarkedAttendance {
   const isTold = attendance === 'away_with_notice' || attendance === 'late_notice';
   return isTold && cancelDeadlineAt !== null ? absenceKind(toldAt, cancelDeadlineAt) : attendance;
-}
-
-async function settleCredit(trx: Trx, seat: SeatWithLesson, attendance: MarkedAttendance): Promise<string> {
-  if (!seat.enrolmentId || seat.source !== 'roster') return '';
-  const existing = await creditOfSeat(trx, seat.id);
-  if (existing) await takeBack(trx, existing.id);
-  const { credit, sentence } = await creditVerdict(trx, seat, seat.enrolmentId, attendance);
-  if (!credit) return sentence;
-  const change = { cause: credit.cause, minutes: seat.lengthMinutes, lastOn: credit.lastOn, countsToCap: credit.countsToCap ? 1 : 0 };
-  if (existing) await reviveCredit(trx, existing.id, change);
-  else await insertCredit(trx, { id: newId(), studentId: seat.studentId, enrolmentId: seat.enrolmentId, sourceSeatId: seat.id, bornOn: seat.localDate, state: 'live', ...change });
-  return sentence;
-}
-
-async function takeBack(trx: Trx, creditId: string): Promise<void> {
-  if ((await usedMinutes(trx, creditId)) > 0) {
-    throw new AppError('conflict', 'The make-up credit from this lesson has been used already. The owner decides what happens.');
-  }
-  await cancelCredit(trx, creditId);
-}
-
-async function creditVerdict(trx: Trx, seat: SeatWithLesson, enrolmentId: string, attendance: MarkedAttendance): Promise<CreditVerdict> {
-  const [rules, term] = [await houseRulesOn(trx, seat.localDate), await termOn(trx, seat.localDate)];
-  const capped = await countCappedCredits(trx, enrolmentId, term?.startsOn ?? seat.localDate, term?.endsOn ?? seat.localDate);
-  return creditFor(attendance, seat.localDate, capped, { capPerTerm: rules['credit.cap_per_term'], validDays: rules['credit.valid_days'] });
 }
 
 /** The desk sees a student come in. It is not a mark: the teacher marks the lesson. */
