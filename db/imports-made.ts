@@ -17,7 +17,7 @@ function chunks<T>(list: readonly T[]): T[][] {
 async function hashesNow(db: Db, table: MadeTable, ids: readonly string[]): Promise<Map<string, string>> {
   const hashes = new Map<string, string>();
   for (const part of chunks(ids)) {
-    const rows: { id: string }[] = await db(table).whereIn('id', part);
+    const rows = await db<{ id: string }>(table).whereIn('id', part);
     for (const row of rows) hashes.set(row.id, hashOf(row));
   }
   return hashes;
@@ -42,17 +42,23 @@ export async function madeBy(db: Db, batchId: string): Promise<(Made & { hash: s
 /** Rows that are no longer as the import left them, or gone. */
 export async function changedSince(db: Db, made: readonly (Made & { hash: string })[]): Promise<Made[]> {
   const changed: Made[] = [];
-  for (const table of tablesIn(made)) {
+  for (const table of tablesIn(made).filter((name) => !SHARED.includes(name))) {
     const now = await hashesNow(db, table, idsIn(made, table));
     changed.push(...made.filter((one) => one.table === table && now.get(one.id) !== one.hash));
   }
   return changed;
 }
 
-/** Tables whose rows go with the row they hang on. */
-const HANGING: Partial<Record<MadeTable, readonly [string, string][]>> = {
-  room: [['room_feature', 'room_id']], occurrence: [['hold', 'occurrence_id']], family: [['family_student', 'family_id']], person: [['student_rung', 'student_id'], ['family_student', 'student_id']],
+type Hanging = { child: string; column: string; /** The other end of a row that joins two: made by the import as well, or the row is somebody's use. */ other?: { column: string; table: MadeTable } };
+/** Rows without an id that go with the row they hang on. */
+const HANGING: Partial<Record<MadeTable, readonly Hanging[]>> = {
+  room: [{ child: 'room_feature', column: 'room_id' }],
+  occurrence: [{ child: 'hold', column: 'occurrence_id' }],
+  family: [{ child: 'family_student', column: 'family_id', other: { column: 'student_id', table: 'person' } }],
+  person: [{ child: 'student_rung', column: 'student_id' }, { child: 'family_student', column: 'student_id', other: { column: 'family_id', table: 'family' } }],
 };
+/** General words of the school, which others may use by now: they go only when nothing points at them any more. */
+const SHARED: readonly MadeTable[] = ['term', 'subject', 'feature'];
 
 export type Use = Made & { by: string };
 
@@ -60,43 +66,51 @@ export type Use = Made & { by: string };
 export async function usedSince(db: Db, made: readonly Made[]): Promise<Use[]> {
   const uses: Use[] = [];
   const own = new Set(made.map(({ table, id }) => `${table}:${id}`));
-  for (const table of tablesIn(made)) {
-    for (const { child, columnName } of await pointersTo(db, table)) {
-      if ((HANGING[table] ?? []).some(([name, column]) => name === child && column === columnName)) continue;
-      uses.push(...(await usesThrough(db, { made: made.filter((one) => one.table === table), child, columnName, own })));
-    }
+  for (const table of tablesIn(made).filter((name) => !SHARED.includes(name))) {
+    const ones = made.filter((one) => one.table === table);
+    for (const pointer of await pointersTo(db, table)) uses.push(...(await usesThrough(db, { ...pointer, ones, own })));
   }
   return uses;
 }
 
-const pointersTo = (db: Db, table: string): Promise<{ child: string; columnName: string }[]> =>
-  db.raw(`SELECT m.name AS child, f."from" AS column_name FROM sqlite_master m, pragma_foreign_key_list(m.name) f WHERE m.type = 'table' AND f."table" = ? ORDER BY m.name`, [table]);
+type Pointer = { child: string; column: string; hasId: number };
+const pointersTo = (db: Db, table: string): Promise<Pointer[]> =>
+  db.raw(`SELECT m.name AS child, f."from" AS "column", EXISTS (SELECT 1 FROM pragma_table_info(m.name) i WHERE i.name = 'id') AS has_id FROM sqlite_master m, pragma_foreign_key_list(m.name) f WHERE m.type = 'table' AND f."table" = ? ORDER BY m.name`, [table]);
 
-type Pointer = { made: readonly Made[]; child: string; columnName: string; own: ReadonlySet<string> };
+type Search = Pointer & { ones: readonly Made[]; own: ReadonlySet<string> };
 
-async function usesThrough(db: Db, { made, child, columnName, own }: Pointer): Promise<Use[]> {
-  const byId = new Map(made.map((one) => [one.id, one]));
+async function usesThrough(db: Db, { ones, child, column, hasId, own }: Search): Promise<Use[]> {
+  const other = otherEnd(ones[0]?.table, { child, column, hasId });
+  if (other === null) return [];
+  const byId = new Map(ones.map((one) => [one.id, one]));
   const uses: Use[] = [];
   for (const ids of chunks([...byId.keys()])) {
-    const rows: { target: string; childId?: string }[] = await db(child).whereIn(columnName, ids).select(`${columnName} as target`, ...(await hasId(db, child) ? ['id as childId'] : []));
-    for (const { target, childId } of rows) {
-      const one = byId.get(target);
-      if (one && !own.has(`${child}:${childId}`)) uses.push({ ...one, by: child });
-    }
+    const rows: { target: string; other: string }[] = await db(child).whereIn(column, ids).select(`${column} as target`, `${other.column} as other`);
+    const foreign = rows.filter((row) => !own.has(`${other.table}:${row.other}`));
+    uses.push(...foreign.flatMap(({ target }) => { const one = byId.get(target); return one ? [{ ...one, by: child }] : []; }));
   }
   return uses;
 }
 
-async function hasId(db: Db, table: string): Promise<boolean> {
-  const rows: unknown[] = await db.raw("SELECT 1 FROM pragma_table_info(?) WHERE name = 'id'", [table]);
-  return rows.length > 0;
+/** By which column a pointing row is known as the import's own: its id, or the other end of a row that joins two. Null: it simply hangs on. */
+function otherEnd(table: MadeTable | undefined, { child, column, hasId }: Pointer): { column: string; table: string } | null {
+  const hanging = table ? HANGING[table]?.find((hang) => hang.child === child && hang.column === column) : undefined;
+  return hanging ? (hanging.other ?? null) : { column: hasId === 1 ? 'id' : column, table: child };
 }
 
 /** Takes back everything, the last first. Foreign keys still refuse whatever was overlooked. */
 export async function unmake(trx: Trx, batchId: string, made: readonly Made[]): Promise<void> {
   for (const { table, id } of [...made].reverse()) {
-    for (const [child, column] of HANGING[table] ?? []) await trx(child).where(column, id).delete();
+    if (SHARED.includes(table) && (await isPointedAt(trx, table, id))) continue;
+    for (const { child, column } of HANGING[table] ?? []) await trx(child).where(column, id).delete();
     await trx(table).where({ id }).delete();
   }
   await trx('import_made').where({ batchId }).delete();
+}
+
+async function isPointedAt(db: Db, table: MadeTable, id: string): Promise<boolean> {
+  for (const { child, column } of await pointersTo(db, table)) {
+    if (await db(child).where(column, id).first(db.raw('1 AS found'))) return true;
+  }
+  return false;
 }

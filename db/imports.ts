@@ -50,4 +50,10 @@ export async function replaceImportRows(trx: Trx, batchId: string, rows: readonl
   for (let at = 0; at < rows.length; at += 100) await trx('import_row').insert(rows.slice(at, at + 100));
 }
 
-export const importRowsOf = (db: Db, batchId: string): Promise<ImportRow[]> => db<ImportRow>('import_row').where({ batchId }).orderBy('id');
+export const importRowsOf = (db: Db, batchId: string): Promise<ImportRow[]> => db<ImportRow>('import_row').where({ batchId }).orderBy(['sheet', 'rowNo']);
+
+export type ImportTarget = { sheet: string; rowNo: number; targetTable: string; targetId: string };
+/** Which record each new row became. */
+export async function setImportTargets(trx: Trx, batchId: string, targets: readonly ImportTarget[]): Promise<void> {
+  for (const { sheet, rowNo, targetTable, targetId } of targets) await trx('import_row').where({ batchId, sheet, rowNo }).update({ targetTable, targetId });
+}

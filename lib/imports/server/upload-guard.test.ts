@@ -1,0 +1,39 @@
+import { readFileSync } from 'node:fs';
+import path from 'node:path';
+import ExcelJs from 'exceljs';
+import { describe, expect, it } from 'vitest';
+import { typedText } from '../cell';
+import { parseWorkbook } from './parse-workbook';
+import { assertSafeWorkbook } from './zip-directory';
+
+const heron = () => readFileSync(path.resolve(import.meta.dirname, '../../../tests/support/data/heron-court.xlsx'));
+
+describe('what may be uploaded', () => {
+  it('lets a workbook through', () => expect(() => assertSafeWorkbook(heron(), 'Heron Court.XLSX')).not.toThrow());
+
+  it.each([
+    ['another ending', heron(), 'heron.xlsm'], ['no zip', Buffer.from('name,e-mail\n'.repeat(10)), 'list.xlsx'], ['an empty file', Buffer.alloc(0), 'list.xlsx'],
+    ['a zip cut short', heron().subarray(0, 9000), 'list.xlsx'],
+  ])('refuses %s', (_what, bytes, name) => expect(() => assertSafeWorkbook(bytes, name)).toThrow('This is not a workbook.'));
+
+  it('refuses what is larger than 5 MB', () => expect(() => assertSafeWorkbook(Buffer.concat([heron(), Buffer.alloc(5 * 1024 * 1024)]), 'a.xlsx')).toThrow('larger than 5 MB'));
+
+  it('refuses a bomb by its table of contents, without unpacking it', () => {
+    const bytes = heron();
+    const entry = bytes.indexOf(Buffer.from([0x50, 0x4b, 0x01, 0x02]));
+    bytes.writeUInt32LE(200 * 1024 * 1024, entry + 24);
+    expect(() => assertSafeWorkbook(bytes, 'bomb.xlsx')).toThrow('unpacks to more than is safe');
+  });
+
+  it('takes text that looks like a formula or a link as text', async () => {
+    const book = new ExcelJs.Workbook();
+    const sheet = book.addWorksheet('Students');
+    sheet.addRow(['=1+1', '=HYPERLINK("http://example.com")', '+44', '-12.50', '@SUM(A1)']);
+    sheet.getCell('F1').value = { formula: 'A1', result: undefined, date1904: false };
+    sheet.getCell('G1').value = { text: 'Ada', hyperlink: 'javascript:alert(1)' };
+    sheet.getCell('H1').value = { richText: [{ text: 'Cé' }, { text: 'lia' }] };
+    sheet.getCell('I1').value = { formula: '30*0.9', result: 27, date1904: false };
+    const [read] = await parseWorkbook(Buffer.from(await book.xlsx.writeBuffer()), 'a.xlsx');
+    expect(read?.rows[0]?.cells.map(typedText)).toEqual(['=1+1', '=HYPERLINK("http://example.com")', '+44', '-12.50', '@SUM(A1)', '#formula without a saved value', 'Ada', 'Célia', '27']);
+  });
+});
