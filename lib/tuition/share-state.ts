@@ -6,8 +6,8 @@ export type ShareState = 'paid' | 'credited' | 'part_paid' | 'open' | 'overdue' 
 export const SHARE_WORDS: Record<ShareState, string> = {
   paid: 'paid', credited: 'credited', part_paid: 'part paid', open: 'to pay', overdue: 'overdue', nothing_to_pay: 'nothing to pay',
 };
-export const SHARE_TONES: Record<ShareState, 'ok' | 'wait' | 'bad' | 'plain'> = {
-  paid: 'ok', credited: 'ok', part_paid: 'wait', open: 'wait', overdue: 'bad', nothing_to_pay: 'plain',
+export const SHARE_TONES: Record<ShareState, 'ok' | 'wait' | 'bad' | 'neutral'> = {
+  paid: 'ok', credited: 'ok', part_paid: 'wait', open: 'wait', overdue: 'bad', nothing_to_pay: 'neutral',
 };
 
 export type ShareFacts = { amountMinor: number; paidMinor: number; creditedMinor: number; nextDueOn: LocalDate | null };

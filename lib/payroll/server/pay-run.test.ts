@@ -255,7 +255,7 @@ describe('the workbook', () => {
     });
     expect(Math.round(wages)).toBe(56_250);
     expect(sheet?.lastRow?.getCell(7).value).toBe(562.5);
-    expect(String(sheet?.getRow(4).getCell(3).value)).toMatch(/^'=1\+1/);
+    expect(sheet?.getRow(4).getCell(3).text).toMatch(/^'=1\+1/);
     expect(sheet?.getRow(4).getCell(1).value).toEqual(new Date('2026-10-01T00:00:00Z'));
   });
 
