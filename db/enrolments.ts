@@ -39,8 +39,9 @@ export async function recordEnrolmentChange(trx: Trx, change: {
   await trx('enrolment_change').insert({ ...rest, beforeJson: JSON.stringify(before), afterJson: JSON.stringify(after) });
 }
 
-/** The level a student has been placed at or climbed to; 1 for a beginner. Kept with the ladder. */
+/** The level a student works at: that of the lowest rung not yet passed or credited; 1 for a beginner. */
 export async function levelOfStudent(db: Db, studentId: string): Promise<number> {
-  const [row]: { level: number | null }[] = await db('student_ladder').where({ studentId }).max('levelNo as level');
+  const [row]: { level: number | null }[] = await db('student_rung as s').join('rung_text as t', (join) => join.on('t.rungId', 's.rungId').andOn('t.editionId', 's.editionId'))
+    .join('level as v', 'v.id', 't.levelId').where('s.studentId', studentId).whereNotIn('s.state', ['passed', 'credited']).min('v.no as level');
   return row?.level ?? 1;
 }

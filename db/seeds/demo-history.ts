@@ -1,5 +1,16 @@
 import type { House } from './demo-house';
-import type { demoTerms } from './demo-calendar-plan';
+import { layLadder } from './demo-ladder';
+import { layPayments, layPrices, layTuitionRun } from './demo-money';
+import { layPayRuns, layRates } from './demo-pay';
 
-/** Bills, pay and the ladder of the past months. */
-export async function layHistory(_house: House, _terms: ReturnType<typeof demoTerms>): Promise<void> {}
+/** Bills, payments, pay and the ladder of the past two terms, made by the same operations as the screens use. */
+export async function layHistory(house: House): Promise<void> {
+  await layPrices(house);
+  await layTuitionRun(house, house.terms.last, { instalments: 1 });
+  await layPayments(house, house.terms.last, { allPaid: true });
+  await layTuitionRun(house, house.terms.current, { instalments: 3 });
+  await layPayments(house, house.terms.current, { allPaid: false });
+  await layRates(house);
+  await layPayRuns(house);
+  await layLadder(house);
+}

@@ -24,7 +24,7 @@ export async function layDemoSchool(db: Knex, now: EpochSeconds): Promise<void> 
   const house = await layHouse(db, { random, now, today, zone: ZONE, terms });
   await layTerm(house, { term: house.terms.last, until: house.terms.last.endsOn });
   await layTerm(house, { term: house.terms.current, until: today });
-  await layHistory(house, terms);
+  await layHistory(house);
   await layOpenQuestions(house);
   if (!(await findSchool(db))?.isDemo) throw new Error('the demo school is not marked as one');
   // What was written while laying the past has been "sent" long ago; nothing of it goes out now.

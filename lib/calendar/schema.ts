@@ -95,3 +95,13 @@ export const deskEnquirySchema = enquirySchema.omit({ mayWrite: true, website: t
   levelGuess: z.number().int().min(1).max(20).default(1),
 }).refine(({ contactEmail, contactPhone }) => contactEmail !== '' || contactPhone !== '', { path: ['contactPhone'], message: 'Enter an e-mail address or a telephone number.' });
 export type DeskEnquiryInput = z.input<typeof deskEnquirySchema>;
+
+export const roomSchema = z.object({
+  siteId: idSchema,
+  name: z.string().trim().min(1, 'Enter a name.').max(60, 'At most 60 characters.'),
+  description: z.string().trim().max(80, 'At most 80 characters.').default(''),
+  personLimit: z.number('Enter a number.').int('Whole people.').min(1, 'At least one.').max(2000, 'At most 2000.'),
+  turnoverMin: z.number('Enter minutes.').int('Whole minutes.').min(0).max(120, 'At most two hours.').default(0),
+  features: z.array(z.string().max(60)).max(20).default([]),
+});
+export type RoomInput = z.input<typeof roomSchema>;
