@@ -22,3 +22,11 @@ export type StudentLadder = {
 /** The level a student is at: that of the nearest next rung, else the last. */
 export const currentLevel = ({ levels, next }: Pick<StudentLadder, 'levels' | 'next'>): LadderLevel | undefined =>
   levels.find(({ rungs }) => rungs.some(({ id }) => id === next[0])) ?? levels.at(-1);
+
+/** So many levels round the current one, for a small picture: one below it where there is one, the rest above. */
+export function levelsAround({ levels, next }: Pick<StudentLadder, 'levels' | 'next'>, count: number): LadderLevel[] {
+  const current = currentLevel({ levels, next });
+  const at = current ? levels.indexOf(current) : 0;
+  const first = Math.max(0, Math.min(at - 1, levels.length - count));
+  return levels.slice(first, first + count);
+}

@@ -1,26 +1,25 @@
 import Link from 'next/link';
 import { redirect } from 'next/navigation';
 import { PageHeader } from '@/components/ui/page-header';
-import { Sheet } from '@/components/ui/sheet';
 import { EmptyState } from '@/components/ui/states';
-import { familyLessons } from '@/lib/calendar/server/family-lessons';
+import { climbersOf } from '@/lib/ladder/server/climbers-of';
 import { requireContextTo } from '@/lib/server/context';
 
 export const metadata = { title: 'Progress' };
 
-export default async function ProgressIndexPage() {
+/** One student: straight to their ladder. Several children: choose whose. */
+export default async function ProgressListPage() {
   const context = await requireContextTo('read', 'Progress');
-  const { students } = await familyLessons({ from: context.today, until: context.today }, context);
-  const [only] = students;
-  if (only && students.length === 1) redirect(`/progress/${only.id}`);
+  const students = await climbersOf(context);
+  if (students.length === 1) redirect(`/progress/${students[0]?.id ?? ''}`);
   return (
     <>
-      <PageHeader title="Progress" />
-      <Sheet flush>
-        {students.length === 0 ? <EmptyState title="Nobody to show">Progress appears with the first lesson.</EmptyState> : (
-          <ul>{students.map(({ id, name }) => <li key={id} className="border-b border-rule last:border-b-0"><Link href={`/progress/${id}`} className="block px-4 py-4 font-display text-h2 font-semibold text-ink no-underline hover:bg-wash">{name}</Link></li>)}</ul>
-        )}
-      </Sheet>
+      <PageHeader title="Progress" sub={students.length > 0 ? 'Whose ladder would you like to see?' : undefined} />
+      {students.length === 0 ? <EmptyState title="Nobody’s ladder is open to you yet">Once a child is enrolled and the school has linked you, their progress is here. The school can tell you more.</EmptyState> : (
+        <ul className="grid gap-3">
+          {students.map(({ id, name }) => <li key={id}><Link href={`/progress/${id}`} className="sheet block p-4 font-display text-h2 font-semibold text-ink no-underline hover:bg-wash">{name}</Link></li>)}
+        </ul>
+      )}
     </>
   );
 }

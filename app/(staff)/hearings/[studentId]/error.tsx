@@ -1,0 +1,5 @@
+'use client';
+
+import { Fault } from '@/components/shell/fault';
+
+export default Fault;
