@@ -17,6 +17,7 @@ export async function enqueueJob(db: Db, job: Pick<Job, 'id' | 'kind' | 'label' 
   return found.id;
 }
 
+export const findJobByKey = (db: Db, key: string): Promise<Job | undefined> => db<Job & { key: string }>('job').where({ key }).first();
 export const findJob = (db: Db, id: string): Promise<Job | undefined> => db<Job>('job').where({ id }).first();
 
 const LEASE_SECONDS = 60;

@@ -1,4 +1,4 @@
-import type { ComponentProps, ReactNode } from 'react';
+import { useId, type ComponentProps, type ReactNode } from 'react';
 import { Field, INPUT } from './field';
 
 type Labelled = { label: ReactNode; help?: ReactNode; error?: string; optional?: boolean; fieldClass?: string };
@@ -59,31 +59,38 @@ export function MoneyField({ currencySign, ...props }: Labelled & ComponentProps
 }
 
 export function Checkbox({ label, help, error, className = '', ...input }: Omit<Labelled, 'optional' | 'fieldClass'> & ComponentProps<'input'>) {
+  const id = useId();
+  const described = [help ? `${id}-help` : '', error ? `${id}-error` : ''].filter((part) => part !== '').join(' ');
   return (
     <div className={className}>
       <label className="flex items-start gap-3 tap">
-        <input type="checkbox" {...input} aria-invalid={error ? true : undefined} className="mt-[3px] size-[18px] shrink-0 accent-ink" />
+        <input type="checkbox" {...input} aria-invalid={error ? true : undefined} aria-describedby={described === '' ? undefined : described} className="mt-[3px] size-[18px] shrink-0 accent-ink" />
         <span>{label}</span>
       </label>
-      {help ? <p className="ml-[30px] text-small text-ink-3">{help}</p> : null}
-      {error ? <p role="alert" className="ml-[30px] text-small font-semibold text-brick">{error}</p> : null}
+      {help ? <p id={`${id}-help`} className="ml-[30px] text-small text-ink-3">{help}</p> : null}
+      {error ? <p id={`${id}-error`} role="alert" className="ml-[30px] text-small font-semibold text-brick">{error}</p> : null}
     </div>
   );
 }
 
-type RadioGroupProps = { legend: ReactNode; options: readonly (SelectOption & { help?: string })[]; error?: string } & Omit<ComponentProps<'input'>, 'type'>;
+type RadioGroupProps = {
+  legend: ReactNode; options: readonly (SelectOption & { help?: string })[]; error?: string;
+  /** For a form that keeps its own state; a registered field leaves both out. */
+  checkedValue?: string | null; onPick?: (value: string) => void;
+} & Omit<ComponentProps<'input'>, 'type'>;
 
-export function RadioGroup({ legend, options, error, ...input }: RadioGroupProps) {
+export function RadioGroup({ legend, options, error, checkedValue, onPick, ...input }: RadioGroupProps) {
+  const id = useId();
   return (
-    <fieldset className="flex flex-col gap-1">
+    <fieldset className="flex flex-col gap-1" aria-describedby={error ? `${id}-error` : undefined}>
       <legend className="mb-1 text-[14px] font-semibold">{legend}</legend>
       {options.map(({ value, label, help }) => (
         <label key={value} className="flex items-start gap-3 rounded border border-rule px-3 py-2 has-checked:border-ink has-checked:bg-wash tap">
-          <input type="radio" {...input} value={value} className="mt-[3px] size-[18px] shrink-0 accent-ink" />
+          <input type="radio" {...input} {...(onPick ? { checked: checkedValue === value, onChange: () => onPick(value) } : {})} value={value} className="mt-[3px] size-[18px] shrink-0 accent-ink" />
           <span>{label}{help ? <span className="block text-small text-ink-3">{help}</span> : null}</span>
         </label>
       ))}
-      {error ? <p role="alert" className="text-small font-semibold text-brick">{error}</p> : null}
+      {error ? <p id={`${id}-error`} role="alert" className="text-small font-semibold text-brick">{error}</p> : null}
     </fieldset>
   );
 }

@@ -10,7 +10,7 @@ import { assertCan } from '@/policies/ability';
 import { typedText, type Sheet } from '../cell';
 import { checkWorkbook } from '../check-workbook';
 import { controlTotals, priceTotals, type PriceTotals, type SheetTotals } from '../control-totals';
-import { suggestMapping, type SheetMapping } from '../mapping';
+import { mappingFor, suggestMapping, type SheetMapping } from '../mapping';
 import type { CheckedRow } from '../rows';
 import type { ImportChoices, ImportSettings } from '../schema';
 import { checkOptionsFor, firstChoices, settingsOf, sheetsOf, type SiteOptions } from './import-plan';
@@ -41,8 +41,18 @@ export async function checkAgain({ batchId, choices, mapping }: Again, context: 
   if (!batch) throw notFound('import');
   assertCan(ability, 'update', 'Import', batch);
   const sheets = await sheetsOf(db, batchId);
-  const settings = { mapping: mapping ?? settingsOf(batch).mapping, choices };
+  const saved = settingsOf(batch).mapping;
+  const settings = { mapping: mapping ? mapping.map((wanted) => reread(wanted, saved, sheets)) : saved, choices };
   return transaction(db, async (trx) => (await writeVerdicts(trx, context, { batchId, sheets, settings })).control);
+}
+
+/** A sheet that is to be read as another kind, or from another row of headings, has its columns found afresh. */
+function reread(wanted: SheetMapping, saved: readonly SheetMapping[], sheets: readonly Sheet[]): SheetMapping {
+  const before = saved.find(({ sheet }) => sheet === wanted.sheet);
+  const sheet = sheets.find(({ name }) => name === wanted.sheet);
+  const isSame = before?.kind === wanted.kind && before.headingRow === wanted.headingRow;
+  if (isSame || !sheet || wanted.kind === null) return wanted;
+  return mappingFor(sheet, wanted.kind, wanted.headingRow);
 }
 
 type Verdicts = { batchId: string; sheets: Sheet[]; settings: ImportSettings };
