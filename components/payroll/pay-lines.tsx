@@ -16,11 +16,11 @@ export function PayLines({ pay, words, aside }: { pay: TeacherPay; words: MoneyW
     <Sheet eyebrow="Every line" flush>
       <ul>
         {pay.lines.map((line) => (
-          <li key={line.lineId} className="grid grid-cols-[minmax(0,1fr)_auto] items-start gap-x-3 gap-y-1 border-t border-rule px-4 py-[10px] md:grid-cols-[124px_minmax(0,1fr)_70px_minmax(110px,auto)_auto] md:items-baseline">
+          <li key={line.lineId} className="grid grid-cols-[minmax(0,1fr)_auto] items-start gap-x-3 gap-y-1 border-t border-rule px-4 py-[10px] md:grid-cols-[124px_minmax(0,1fr)_70px_minmax(110px,auto)_auto]">
             <span className="num text-small text-ink-3 max-md:col-span-2">{formatDate(line.localDate, words.locale, 'short')}{line.startMin === null ? '' : ` ${clockOf(line.startMin)}`}</span>
             <span className="min-w-0">{line.text}{line.problem ? <span className="block text-small text-brick">{line.problem}</span> : null}</span>
             <span className="num text-right text-small text-ink-3 max-md:hidden">{line.minutes > 0 ? hoursText(line.minutes) : '—'}</span>
-            <span className="num text-right font-semibold"><Working figure={say(line.amountMinor, words)} steps={line.steps} align="right" /></span>
+            <span className="num text-right"><Working figure={<b>{say(line.amountMinor, words)}</b>} steps={line.steps} align="right" /></span>
             <span className="max-md:col-span-2 max-md:justify-self-start">{line.isAsked ? <Chip tone="wait">asked</Chip> : aside?.(line)}</span>
           </li>
         ))}

@@ -1,5 +1,4 @@
 import type { ReactNode } from 'react';
-import { Working } from '../ui/working';
 import { say, type MoneyWords } from '@/lib/explained';
 import { formatDate } from '@/lib/format';
 import type { LocalDate } from '@/lib/time';
@@ -28,22 +27,26 @@ export function InvoicePaper({ schoolName, seller, head, to, lines, words, child
         </dl>
       </header>
       <p className="whitespace-pre-line py-4">{[to.name, to.address].filter(Boolean).join('\n')}</p>
-      <table className="w-full border-collapse">
-        <caption className="sr-only">Lines of the invoice; each amount opens to show how it was worked out.</caption>
-        <thead><tr className="border-b border-rule-strong text-small text-ink-3"><th scope="col" className="py-2 text-left font-semibold">What</th><th scope="col" className="py-2 text-right font-semibold">Amount</th></tr></thead>
-        <tbody>
-          {lines.map((line, index) => (
-            <tr key={index} className="border-b border-rule align-top">
-              <td className="py-3 pr-4">
-                {line.text}
-                <ol className="hidden text-small text-ink-2 print:block">{line.steps.map((step, at) => <li key={at}>{step}</li>)}</ol>
-              </td>
-              <td className="num py-3 text-right font-semibold"><Working figure={say(line.amountMinor, words)} steps={line.steps} align="right" /></td>
-            </tr>
-          ))}
-        </tbody>
-      </table>
+      <div aria-hidden className="flex justify-between border-b border-rule-strong py-2 text-small font-semibold text-ink-3"><span>What</span><span>Amount</span></div>
+      <ul aria-label="Lines; each opens to show how it was worked out">{lines.map((line, index) => <PaperRow key={index} line={line} words={words} />)}</ul>
       {children}
     </article>
+  );
+}
+
+/** Opens on the screen; on paper its working always stands below it. */
+function PaperRow({ line, words }: { line: PaperLine; words: MoneyWords }) {
+  const working = line.steps.map((step, at) => <li key={at}>{step}</li>);
+  return (
+    <li className="border-b border-rule">
+      <details className="group">
+        <summary className="flex cursor-pointer list-none items-baseline justify-between gap-4 py-3 tap [&::-webkit-details-marker]:hidden">
+          <span className="min-w-0">{line.text}</span>
+          <span className="num font-semibold underline decoration-rule-strong decoration-dotted underline-offset-4 print:no-underline">{say(line.amountMinor, words)}</span>
+        </summary>
+        <ol className="appear mb-3 flex flex-col gap-[2px] rounded bg-wash px-3 py-2 text-small text-ink-2 print:hidden">{working}</ol>
+      </details>
+      <ol className="hidden pb-2 text-small text-ink-2 print:block" aria-hidden>{working}</ol>
+    </li>
   );
 }

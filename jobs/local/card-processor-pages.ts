@@ -13,7 +13,7 @@ input[type=text]{width:100%;box-sizing:border-box;font:inherit;padding:10px 12px
 .two{display:grid;grid-template-columns:1fr 1fr;gap:12px}button,.btn{font:600 15px/1 inherit;font-family:inherit;padding:12px 16px;border-radius:4px;border:1px solid #bfb49b;background:#fff;color:#1c2130;cursor:pointer;text-decoration:none;display:inline-block}
 button.pay{width:100%;background:#8f4f0e;border-color:#8f4f0e;color:#fff;margin-top:18px;padding:14px}:focus-visible{outline:3px solid #1d5a73;outline-offset:2px}
 .bad{background:#fae4df;color:#a22c22;padding:10px 12px;border-radius:4px;margin:0 0 12px}a{color:#1d5a73}table{border-collapse:collapse;width:100%;font-size:14.5px}td,th{text-align:left;padding:8px 8px;border-bottom:1px solid #e0d8c6;vertical-align:top}
-form.inline{display:inline}code{font-size:13px;overflow-wrap:anywhere}.row{display:flex;gap:8px;flex-wrap:wrap;margin:10px 0}`;
+form.inline{display:inline}@media(max-width:640px){table,tbody,tr,td{display:block}th{display:none}td{border:0;padding:3px 0}tr{border-bottom:1px solid #e0d8c6;padding:8px 0}}code{font-size:13px;overflow-wrap:anywhere}.row{display:flex;gap:8px;flex-wrap:wrap;margin:10px 0}`;
 
 const page = (title: string, body: string, isWide = false) => `<!doctype html><html lang="en"><head><meta charset="utf-8"><meta name="viewport" content="width=device-width,initial-scale=1">
 <title>${escapeHtml(title)}</title><style>${STYLE}</style></head><body><main${isWide ? ' class="wide"' : ''}>${body}</main></body></html>`;

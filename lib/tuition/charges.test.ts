@@ -49,7 +49,8 @@ describe('beside the last run', () => {
     ['same', [line({})], [line({})], 'As last time'],
     ['changed', [line({})], [line({ quantity: 15, netMinor: 63_000 })], '15 lessons instead of 13'],
     ['changed', [line({})], [line({ unitMinor: 4400, netMinor: 57_200, discounts: ['Second child'] })], 'Price €42.00 → €44.00 and Second child added'],
-    ['changed', [line({})], [line({ enrolmentId: 'f', text: 'Ben: Voicings, 13 lessons' })], 'New: Ben: Voicings and ended: Ada: Voicings'],
+    ['changed', [line({})], [line({ enrolmentId: 'f', text: 'Ben: Voicings, 13 lessons' })], 'New: Ben: Voicings; ended: Ada: Voicings'],
+    ['changed', [line({}), line({ enrolmentId: 'f', text: 'Ben: Voicings, 13 lessons' })], [line({ quantity: 15 }), line({ enrolmentId: 'f', text: 'Ben: Voicings, 15 lessons', quantity: 15 })], 'Ada: 15 lessons instead of 13; Ben: 15 lessons instead of 13'],
     ['gone', [line({})], [], 'Nothing to charge any more; last time €546.00'],
   ] as const)('%s', (kind, before, after, sentence) => expect(differenceOf(before, after, words)).toEqual({ kind, sentence }));
 });

@@ -6,6 +6,7 @@ import { sumOf } from '../money';
 export type ComparedLine = { enrolmentId: string; text: string; quantity: number; unitMinor: number; netMinor: number; discounts: readonly string[] };
 export type Difference = { kind: 'new' | 'gone' | 'changed' | 'same'; sentence: string };
 
+const studentOf = ({ text }: ComparedLine) => text.split(':')[0] ?? text;
 const nameOf = ({ text }: ComparedLine) => text.split(',')[0] ?? text;
 
 /** What is different for one family beside the last run, and why, in words. */
@@ -16,11 +17,13 @@ export function differenceOf(before: readonly ComparedLine[] | null, after: read
   const ended = before.filter((line) => !after.some(({ enrolmentId }) => enrolmentId === line.enrolmentId)).map((line) => `ended: ${nameOf(line)}`);
   const changed = after.flatMap((line) => {
     const old = before.find(({ enrolmentId }) => enrolmentId === line.enrolmentId);
-    return old ? changesOf(old, line, words) : [];
+    const reasons = old ? changesOf(old, line, words) : [];
+    return reasons.length > 0 ? [{ name: studentOf(line), reasons }] : [];
   });
-  const all = [...started, ...ended, ...new Set(changed)];
+  const isOne = after.length === 1;
+  const all = [...started, ...ended, ...changed.map(({ name, reasons }) => `${isOne ? '' : `${name}: `}${listOf(reasons, words.locale)}`)];
   if (all.length === 0) return { kind: 'same', sentence: 'As last time' };
-  const sentence = listOf(all, words.locale);
+  const sentence = all.join('; ');
   return { kind: 'changed', sentence: sentence.charAt(0).toUpperCase() + sentence.slice(1) };
 }
 

@@ -30,7 +30,7 @@ export type RunProblem = { engagementId: string; name: string; localDate: LocalD
 export type RunQuery = { queryId: string; engagementId: string; name: string; aboutOn: LocalDate; aboutText: string; text: string };
 export type MonthShare = { month: string; tuitionMinor: number; payMinor: number };
 export type PayRunScreen = {
-  payRunId: string; label: string; state: PayRunState; startsOn: LocalDate; endsOn: LocalDate; answerByOn: LocalDate | null; currency: string; today: LocalDate; isOver: boolean;
+  payRunId: string; label: string; kindWords: string; state: PayRunState; startsOn: LocalDate; endsOn: LocalDate; answerByOn: LocalDate | null; currency: string; today: LocalDate; isOver: boolean;
   teachers: TeacherRow[]; totals: PayTotals; problems: RunProblem[]; queries: RunQuery[]; months: MonthShare[]; blocked: string | null;
 };
 
@@ -45,7 +45,7 @@ export async function payRunScreen({ payRunId }: { payRunId: string }, context: 
   const queries = facts.queries.filter(({ state }) => state === 'open').map(({ id, engagementId, aboutOn, aboutText, text }) => ({ queryId: id, engagementId, name: facts.nameOf(engagementId), aboutOn, aboutText, text }));
   const { label, state, startsOn, endsOn, answerByOn, currency } = run;
   return {
-    payRunId, label, state, startsOn, endsOn, answerByOn, currency, today: context.today, isOver: context.today > endsOn, teachers, totals: payTotalsOf(facts.lines), problems, queries,
+    payRunId, label, kindWords: run.engagementKind === 'employee' ? 'Employees' : 'Contractors', state, startsOn, endsOn, answerByOn, currency, today: context.today, isOver: context.today > endsOn, teachers, totals: payTotalsOf(facts.lines), problems, queries,
     months: (await tuitionAndPayByMonth(context.db, addMonths(startsOn, -3))).filter(({ month }) => month <= startsOn.slice(0, 7)).slice(-4), blocked: blockedBy(problems, queries),
   };
 }

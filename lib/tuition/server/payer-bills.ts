@@ -10,7 +10,7 @@ import type { LocalDate } from '@/lib/time';
 import type { invoiceSchema } from '../schema';
 import { shareStateOf, type ShareState } from '../share-state';
 
-export type BillRow = { invoiceId: string; documentNo: string; label: string; issuedOn: LocalDate; amountMinor: number; openMinor: number; nextDueOn: LocalDate | null; state: ShareState; currency: string };
+export type BillRow = { invoiceId: string; documentNo: string; label: string; issuedOn: LocalDate; amountMinor: number; openMinor: number; /** What is due by today, or the next instalment when nothing is. */ dueNowMinor: number; nextDueOn: LocalDate | null; state: ShareState; currency: string };
 export type OwnPayment = { id: string; receiptNo: string; receivedOn: LocalDate; amountMinor: number; method: string; cardLast4: string | null; currency: string; steps: string[] };
 export type PayerBills = { bills: BillRow[]; payments: OwnPayment[]; openMinor: number; overdueMinor: number; creditMinor: number; currency: string; nextDue: BillRow | null };
 
@@ -35,11 +35,13 @@ export async function payerBills(context: Context): Promise<PayerBills> {
 type Settled = Map<string, { paidMinor: number; creditedMinor: number }>;
 
 /** What is still open of a share, when it is due, and its state in one word. */
-export function standing(share: Pick<ShareRow, 'id' | 'amountMinor'>, instalments: readonly OpenInstalment[], settled: Settled, today: LocalDate): Pick<BillRow, 'openMinor' | 'nextDueOn' | 'state'> {
+export function standing(share: Pick<ShareRow, 'id' | 'amountMinor'>, instalments: readonly OpenInstalment[], settled: Settled, today: LocalDate): Pick<BillRow, 'openMinor' | 'dueNowMinor' | 'nextDueOn' | 'state'> {
   const open = instalments.filter(({ shareId, openMinor }) => shareId === share.id && openMinor > 0);
   const nextDueOn = open[0]?.dueOn ?? null;
   const { paidMinor, creditedMinor } = settled.get(share.id) ?? { paidMinor: 0, creditedMinor: 0 };
-  return { openMinor: sumOf(open.map(({ openMinor }) => openMinor)), nextDueOn, state: shareStateOf({ amountMinor: share.amountMinor, paidMinor, creditedMinor, nextDueOn }, today) };
+  const due = open.filter(({ dueOn }) => dueOn <= today);
+  const dueNowMinor = sumOf((due.length > 0 ? due : open.slice(0, 1)).map(({ openMinor }) => openMinor));
+  return { openMinor: sumOf(open.map(({ openMinor }) => openMinor)), dueNowMinor, nextDueOn, state: shareStateOf({ amountMinor: share.amountMinor, paidMinor, creditedMinor, nextDueOn }, today) };
 }
 
 async function ownPayments({ db, ability, actor }: Context): Promise<OwnPayment[]> {
@@ -55,7 +57,7 @@ export type PayerInvoice = Pick<InvoiceHead, 'documentNo' | 'label' | 'issuedOn'
   lines: { text: string; amountMinor: number; steps: string[] }[];
   parts: { sentence: string; amountMinor: number }[];
   instalments: { instalmentNo: number; dueOn: LocalDate; amountMinor: number; openMinor: number }[];
-} & Pick<BillRow, 'openMinor' | 'nextDueOn' | 'state'>;
+} & Pick<BillRow, 'openMinor' | 'dueNowMinor' | 'nextDueOn' | 'state'>;
 export type Seller = { name: string; addressLines: string; taxNumber: string | null };
 
 /** One invoice as its payer sees it: the lines that they pay towards, their part, and what is left to pay. */

@@ -20,7 +20,7 @@ export default async function BillPage({ params }: { params: Promise<{ invoiceId
         <PageHeader title={invoice.label} sub={<ShareChip state={invoice.state} />} actions={<><ButtonLink href="/bills" kind="quiet">All bills</ButtonLink><PrintButton /></>} />
       </div>
       <InvoicePaper schoolName={context.school.name} seller={invoice.seller} head={invoice} to={{ name: invoice.payerName, address: invoice.payerAddress }} lines={invoice.lines} words={words}>
-        <OwnShare invoice={invoice} words={words} today={context.today} />
+        <OwnShare invoice={invoice} words={words} />
       </InvoicePaper>
     </>
   );

@@ -1,15 +1,11 @@
 import { say, type MoneyWords } from '@/lib/explained';
 import { formatDate } from '@/lib/format';
-import { sumOf } from '@/lib/money';
-import type { LocalDate } from '@/lib/time';
 import type { PayerInvoice } from '@/lib/tuition/server/payer-bills';
 import { PayButton } from './pay-button';
 
 /** The payer's own part of the invoice, when it is due, and the way to pay it. */
-export function OwnShare({ invoice, words, today }: { invoice: PayerInvoice; words: MoneyWords; today: LocalDate }) {
-  const open = invoice.instalments.filter(({ openMinor }) => openMinor > 0);
-  const due = open.filter(({ dueOn }) => dueOn <= today);
-  const nowMinor = sumOf((due.length > 0 ? due : open.slice(0, 1)).map(({ openMinor }) => openMinor));
+export function OwnShare({ invoice, words }: { invoice: PayerInvoice; words: MoneyWords }) {
+  const { dueNowMinor } = invoice;
   return (
     <div className="pt-5">
       <ul className="flex flex-col gap-1 text-ink-2">{invoice.parts.map(({ sentence }) => <li key={sentence}>{sentence}</li>)}</ul>
@@ -18,10 +14,10 @@ export function OwnShare({ invoice, words, today }: { invoice: PayerInvoice; wor
         <span className="num font-display text-[28px] font-semibold">{say(invoice.amountMinor, words)}</span>
       </p>
       <Instalments invoice={invoice} words={words} />
-      {nowMinor > 0 ? (
+      {dueNowMinor > 0 ? (
         <div className="no-print mt-5 flex flex-wrap gap-3">
-          <PayButton invoiceId={invoice.invoiceId} what="due" label={`Pay ${say(nowMinor, words)} now`} className="min-w-52 flex-1" />
-          {invoice.openMinor > nowMinor ? <PayButton invoiceId={invoice.invoiceId} what="all" kind="plain" label={`Pay all ${say(invoice.openMinor, words)}`} className="min-w-40" /> : null}
+          <PayButton invoiceId={invoice.invoiceId} what="due" label={`Pay ${say(dueNowMinor, words)} now`} className="min-w-52 flex-1" />
+          {invoice.openMinor > dueNowMinor ? <PayButton invoiceId={invoice.invoiceId} what="all" kind="plain" label={`Pay all ${say(invoice.openMinor, words)}`} className="min-w-40" /> : null}
         </div>
       ) : null}
     </div>

@@ -1,5 +1,4 @@
 import { RunStateChip } from '@/components/payroll/run-state-chip';
-import { ButtonLink } from '@/components/ui/button';
 import { PageHeader } from '@/components/ui/page-header';
 import { formatDate, plural } from '@/lib/format';
 import { payRunScreen } from '@/lib/payroll/server/pay-run-screen';
@@ -17,10 +16,10 @@ export default async function PayRunPage({ params }: { params: Promise<{ payRunI
   const context = await requireContextTo('read', 'PayRun');
   const run = await orNotFound(payRunScreen(await params, context));
   const { locale } = context.school;
-  const sub = <>{formatDate(run.startsOn, locale)} – {formatDate(run.endsOn, locale, 'full')}. Built from {plural(run.totals.lessons, 'paid lesson')}. <RunStateChip state={run.state} /></>;
+  const sub = <>{run.kindWords}, {formatDate(run.startsOn, locale)} – {formatDate(run.endsOn, locale, 'full')}. Built from {plural(run.totals.lessons, 'paid lesson')}. <RunStateChip state={run.state} /></>;
   return (
     <>
-      <PageHeader title={`${run.label}`} sub={sub} actions={<><ButtonLink href="/payroll" kind="quiet">All runs</ButtonLink><RunSteps run={run} locale={locale} /></>} />
+      <PageHeader title={`${formatDate(run.startsOn, locale, 'month')} pay`} sub={sub} actions={<RunSteps run={run} locale={locale} />} />
       <div className="grid items-start gap-[18px] xl:grid-cols-[minmax(0,1fr)_292px]">
         <div className="flex min-w-0 flex-col gap-[18px]">
           <TeacherTable run={run} locale={locale} />

@@ -2,7 +2,7 @@
 
 import { Download } from 'lucide-react';
 import { useState, useTransition } from 'react';
-import { Button, buttonClass } from '@/components/ui/button';
+import { Button, ButtonLink, buttonClass } from '@/components/ui/button';
 import { ConfirmDialog } from '@/components/ui/confirm';
 import { DateField } from '@/components/ui/inputs';
 import { say } from '@/lib/explained';
@@ -22,13 +22,16 @@ export function RunSteps({ run, locale }: { run: PayRunScreen; locale: string })
   const again = () => startTransition(async () => setError(faultOf(await gather({ payRunId: run.payRunId }).catch(() => null))));
   const next = nextStepOf(run);
   return (
-    <>
-      <a href={`/api/payroll/${run.payRunId}/workbook`} download className={buttonClass('plain')}><Download size={16} aria-hidden />Workbook</a>
-      {MAY_GATHER.includes(run.state) ? <Button pending={pending} onClick={again}>Work out again</Button> : null}
-      {next ? <NextButton run={run} next={next} locale={locale} /> : null}
-      {next?.why ? <p id="why-not-yet" className="w-full text-right text-small text-ink-3">{next.why}</p> : null}
-      {error ? <p role="alert" className="w-full text-right text-small text-brick">{error}</p> : null}
-    </>
+    <div className="flex flex-col gap-1 md:items-end">
+      <div className="flex flex-wrap gap-3">
+        <ButtonLink href="/payroll" kind="quiet">All runs</ButtonLink>
+        <a href={`/api/payroll/${run.payRunId}/workbook`} download className={buttonClass('plain')}><Download size={16} aria-hidden />Workbook</a>
+        {MAY_GATHER.includes(run.state) ? <Button pending={pending} onClick={again}>Work out again</Button> : null}
+        {next ? <NextButton run={run} next={next} locale={locale} /> : null}
+      </div>
+      {next?.why ? <p id="why-not-yet" className="text-small text-ink-3">{next.why}</p> : null}
+      {error ? <p role="alert" className="text-small text-brick">{error}</p> : null}
+    </div>
   );
 }
 

@@ -53,6 +53,6 @@ function Figures({ totals, words }: { totals: PayTotals; words: { currency: stri
   const correction = totals.correctionMinor === 0 ? '—' : `${totals.correctionMinor > 0 ? '+' : '−'} ${say(Math.abs(totals.correctionMinor), words)}`;
   const cells = [totals.lessons, (Math.round(totals.minutes / 6) / 10).toFixed(1), money(totals.teachingMinor), money(totals.otherMinor), correction, <b key="gross">{say(totals.grossMinor, words)}</b>];
   return <>{cells.map((cell, index) => (
-    <td key={HEADERS[index]} className="num px-3 py-[10px] text-right max-md:flex max-md:justify-between max-md:p-0 max-md:py-[2px]"><span className="text-small font-normal text-ink-3 md:hidden">{HEADERS[index]}</span>{cell}</td>
+    <td key={HEADERS[index]} className={`num px-3 py-[10px] text-right max-md:justify-between max-md:p-0 max-md:py-[2px] ${cell === '—' ? 'max-md:hidden' : 'max-md:flex'}`}><span className="text-small font-normal text-ink-3 md:hidden">{HEADERS[index]}</span>{cell}</td>
   ))}</>;
 }
