@@ -23,15 +23,22 @@ export const essentialDegrees = (chord: Pick<Chord, 'degrees'>): Degree[] =>
 
 export type TensionUse = 'member' | 'available' | 'caution' | 'avoid';
 
+/** The natural and the altered form of one tension do not sound together. */
+const RIVALS: Partial<Record<Degree, Degree[]>> = { '9': ['b9', '#9'], b9: ['9'], '#9': ['9'], '11': ['#11'], '#11': ['11'], '13': ['b13'], b13: ['13'] };
+
+const hasRival = ({ degrees }: Pick<Chord, 'degrees'>, tension: Degree): boolean => RIVALS[tension]?.some((rival) => degrees.includes(rival)) ?? false;
+
 const isDominant = ({ degrees }: Pick<Chord, 'degrees'>): boolean => degrees.includes('3') && degrees.includes('b7');
 
 /**
  * Whether a tension may be added. One a half step above a chord tone clashes and is avoided; on a dominant only
  * the natural 11 is, for altered tensions are its business. The 13 over a minor seventh makes a tritone with the
- * third: with care, not wrong (encyclopedia article "Avoid note"; the dominant exception is common practice).
+ * third: with care, not wrong (encyclopedia article "Avoid note"; the dominant exception, and that a tension never
+ * meets its own altered form, are common practice).
  */
 export function tensionUse(chord: Pick<Chord, 'degrees'>, tension: Degree): TensionUse {
   if (chord.degrees.includes(tension)) return 'member';
+  if (hasRival(chord, tension)) return 'avoid';
   const steps = chord.degrees.filter((degree) => roleOf(degree) !== 'colour').map(stepOf);
   const step = stepOf(tension);
   if (isDominant(chord)) return tension === '11' || tension === '7' ? 'avoid' : 'available';

@@ -25,7 +25,7 @@ function missingSentence(target: Target, { missing, missingEssential }: Findings
 
 const avoidSentence = (target: Target, tone: HeardTone): string => {
   const third = target.chord.degrees.includes('3') ? '3' : target.chord.degrees.includes('b3') ? 'b3' : null;
-  const clash = tone.degree === '11' && third ? ` a half step above ${named(target, third)}` : ' a half step above a chord tone';
+  const clash = tone.degree === '11' && third ? ` a half step above ${named(target, third)}` : ' a half step from a chord tone';
   return `${printedNote(tone.note)} is the ${degreeWords(tone.degree)}: it clashes,${clash}. Leave it out.`;
 };
 

@@ -4,7 +4,7 @@ import { degreesOf, printedDegree, type Degree, type VoicedNote } from '../harmo
 import { judge } from '../harmony/judge';
 import { printedNote, type NoteName } from '../harmony/note';
 import { placementsOf, targetName, type Target } from '../harmony/target';
-import { tensionUse } from '../harmony/tones';
+import { roleOf, tensionUse } from '../harmony/tones';
 import type { Verdict } from '../harmony/verdict';
 import { chordRoot, keyLabel, writtenKey } from './keys';
 import type { AskedChord, PlaySpec } from './play-spec';
@@ -13,7 +13,7 @@ import type { AskedChord, PlaySpec } from './play-spec';
 export type DrawnKey = { key: NoteName; turn: number };
 
 /** One chord that is asked. `shown` is the voicing on the stave; any of `accepts` counts. */
-export type Ask = { symbol: string; shown: Target; accepts: Target[]; answer: string | null };
+export type Ask = { symbol: string; shown: Target; accepts: Target[]; /** in words, where no one voicing is asked */ answer: string | null };
 
 /**
  * The chords of a drawn key, in order. Where a chord may be voiced in several ways or octaves, the shown path is
@@ -42,7 +42,7 @@ function optionsOf(symbol: string, asked: AskedChord): VoicedNote[][] {
 
 function unvoiced(spec: PlaySpec, symbol: string): Ask {
   const target: Target = { chord: chordOf(symbol), notes: [] };
-  return { symbol, shown: target, accepts: [target], answer: spokenAnswer(spec, target) };
+  return { symbol, shown: target, accepts: [target], answer: answerWords(spec, target) };
 }
 
 /** Semitones that all voices move between two chords of the same size, paired from the bottom up. */
@@ -73,15 +73,22 @@ export function judgeAsk({ accepts, shown }: Ask, played: readonly number[]): Ve
 }
 
 const ASKED_TENSIONS: readonly Degree[] = ['9', '11', '13'];
+const ALTERED_COLOURS: readonly Degree[] = ['b9', '#9', '#11', 'b13'];
 
-/** What the teacher wants to hear at a rung that is told and not played. */
-function spokenAnswer({ how }: PlaySpec, { chord }: Target): string | null {
+/** What the teacher wants to hear where no one voicing is asked: letters, or what may be added. */
+function answerWords({ how }: PlaySpec, { chord }: Target): string {
   if (how === 'spell') return spelledMembers(chord).map(printedNote).join('  ');
-  if (how !== 'name_tensions') return null;
+  if (chord.isAlt) return `${ALTERED_COLOURS.map(printedDegree).join(', ')} may be added, at least one of them.`;
   const uses = ASKED_TENSIONS.map((degree) => ({ degree, use: tensionUse(chord, degree) }));
+  const said = chord.degrees.filter((degree) => roleOf(degree) === 'colour').map(printedDegree);
   const list = (use: string) => uses.filter((tension) => tension.use === use).map(({ degree }) => printedDegree(degree)).join(' and ');
   const [careful, out] = [list('caution'), list('avoid')];
-  return `${list('available')} may be added${careful && `, ${careful} with care`}${out && `; ${out} is left out`}.`;
+  const parts = [
+    how === 'free' && said.length > 0 ? `${said.join(' and ')} must sound` : '',
+    list('available') && `${list('available')} may be added${careful && `, ${careful} with care`}`,
+    out && `${out} ${out.includes('and') ? 'are' : 'is'} left out`,
+  ];
+  return `${parts.filter(Boolean).join('; ')}.`;
 }
 
 /** "Dm11": the heading of the hearing, without octaves and with the school's signs. */

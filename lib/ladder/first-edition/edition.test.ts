@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { asksOf, askDegrees, askName, drawnLabel, judgeAsk, movement } from '../asks';
 import { drawKeys } from '../draw';
 import { findCircle, unreachableRungs, type Need } from '../needs';
-import { criteriaSchema, isSpoken, playSpecSchema, type RungSeed } from '../play-spec';
+import { criteriaSchema, playSpecSchema, type RungSeed } from '../play-spec';
 import { FIRST_EDITION } from './edition';
 
 const rungs = FIRST_EDITION.levels.flatMap((level) => level.rungs);
@@ -45,7 +45,7 @@ describe.each(rungs)('rung $code', ({ code, spec, criteria, keyPool, keysDrawn, 
           const keys = ask.shown.notes.map((note) => note.key);
           if (spec.how === 'voicing') expect(judgeAsk(ask, keys)).toMatchObject({ isRight: true });
           else expect(keys).toEqual([]);
-          expect(ask.answer === null).toBe(!isSpoken(spec.how));
+          expect(ask.answer === null).toBe(spec.how === 'voicing');
           expect(ask.symbol).not.toMatch(/^[A-G](bb|##)/);
         }
         expect(drawnLabel(spec, { key, turn }, 'words')).toMatch(/^[A-G]/);
@@ -117,6 +117,12 @@ it('knows the answers of what is told, not played', () => {
   expect(asksOf(rung('1.1').spec, { key: 'C', turn: 6 })[0]?.answer).toBe('B  D  F  A');
   const answers = [0, 1, 2].map((turn) => asksOf(rung('1.3').spec, { key: 'C', turn })[0]?.answer);
   expect(answers).toEqual(['9 and 13 may be added; 11 is left out.', '9 and 11 may be added, 13 with care.', '9 and 13 may be added; 11 is left out.']);
+});
+
+it('says for a free voicing what may sound', () => {
+  expect(asksOf(rung('4.4').spec, { key: 'C', turn: 0 })[0]?.answer).toBe('9 and 13 may be added; 11 is left out.');
+  expect(asksOf(rung('7.4').spec, { key: 'G', turn: 1 })[0]?.answer).toBe('♭9 and 13 must sound; 9 and 11 are left out.');
+  expect(asksOf(rung('7.4').spec, { key: 'G', turn: 3 })[0]?.answer).toBe('♭9, ♯9, ♯11, ♭13 may be added, at least one of them.');
 });
 
 it('takes either form where the rung leaves the choice', () => {

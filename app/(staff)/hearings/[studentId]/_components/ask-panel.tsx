@@ -42,7 +42,7 @@ export function AskPanel({ hearing, rung, chordStyle, goesOn, onGoesOn }: AskPan
 
 /** What is to be heard: in words for what is told, on the stave for what is played. */
 function Answer({ ask, chordStyle }: { ask: Ask; chordStyle: ChordStyle }) {
-  if (ask.answer !== null) return <p className="my-5 rounded bg-wash px-4 py-3"><span className="eyebrow block">To be heard</span><span className="font-display text-[22px]">{ask.answer}</span></p>;
+  if (ask.answer !== null) return <p className="my-5 rounded bg-wash px-4 py-3"><span className="eyebrow block">To be heard</span><span className="font-display text-h2">{ask.answer}</span></p>;
   return ask.shown.notes.length > 0 ? <GrandStave notes={ask.shown.notes.map(({ note }) => note)} label={askName(ask, chordStyle)} /> : null;
 }
 

@@ -15,7 +15,7 @@ export function KeysHeard({ hearing, rung, drawn, chordStyle }: KeysHeardProps) 
   return (
     <section className="sheet px-4 py-[14px]" aria-label="Keys heard">
       <p className="eyebrow">Keys heard</p>
-      <ul className="mt-[10px] grid gap-[6px]" style={{ gridTemplateColumns: `repeat(auto-fill, minmax(${drawn.some((one) => drawnLabel(rung.spec, one, chordStyle).length > 4) ? 72 : 46}px, 1fr))` }}>
+      <ul className="mt-[10px] grid gap-[6px]" style={{ gridTemplateColumns: `repeat(auto-fill, minmax(${drawn.some((one) => drawnLabel(rung.spec, one, chordStyle).length > 4) ? 62 : 46}px, 1fr))` }}>
         {drawn.map((one, no) => {
           const state = no === drawnNo ? 'now' : tries.get(no) === true ? 'heard' : tries.has(no) ? 'not_right' : 'open';
           return (
