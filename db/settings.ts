@@ -18,3 +18,10 @@ export async function setHouseRule(trx: Trx, rule: { id: string; key: HouseRuleK
   await trx('setting_version').where({ key: rule.key, validFrom: rule.validFrom }).whereNull('siteId').delete();
   await trx('setting_version').insert({ ...row, valueJson: JSON.stringify(value) });
 }
+
+export type HouseRuleRow = { key: string; value: number | string; validFrom: LocalDate; validTo: LocalDate | null; approvedByName: string | null };
+export async function houseRuleHistory(db: Db): Promise<HouseRuleRow[]> {
+  const rows: (Omit<HouseRuleRow, 'value'> & { valueJson: string })[] = await db('setting_version as s').leftJoin('person as p', 'p.id', 's.approvedBy').whereNull('s.siteId').orderBy('s.validFrom', 'desc')
+    .select('s.key', 's.valueJson', 's.validFrom', 's.validTo', db.raw("trim(p.given_name || ' ' || p.family_name) AS approved_by_name"));
+  return rows.map(({ valueJson, ...row }) => ({ ...row, value: JSON.parse(valueJson) as number | string }));
+}

@@ -5,8 +5,7 @@ import { releaseTuitionRun } from '@/lib/tuition/server/release-tuition-run';
 import { takeDeskPayment } from '@/lib/tuition/server/take-desk-payment';
 import { addDays, instantOf, type LocalDate } from '@/lib/time';
 import { insertDiscountRule } from '../discounts';
-import { lessonTypeByCode } from '../lesson-types';
-import { insertPrice, insertProduct, insertTaxRate } from '../prices';
+import { insertPrice, insertTaxRate, liveProducts } from '../prices';
 import { transaction } from '../transaction';
 import { findTuitionRun } from '../tuition-runs';
 import type { TermRow } from '../terms';
@@ -19,20 +18,14 @@ const LESSON_PRICES = [[30, 2800], [45, 4000], [60, 5200]] as const;
 /** Prices, tax and discounts of the demo school; invented, like everything here. */
 export async function layPrices({ db, terms, legalEntityId, owner }: House): Promise<void> {
   const validFrom = addDays(terms.last.startsOn, -60);
-  const [single, group] = [await lessonTypeByCode(db, 'single'), await lessonTypeByCode(db, 'group')];
+  const products = await liveProducts(db);
+  const idOf = (code: string) => products.find((product) => product.code === code)?.id ?? '';
   await transaction(db, async (trx) => {
-    const products = [
-      { id: newId(), code: 'lesson', label: 'Lesson', kind: 'tuition', lessonTypeId: single.id, accountCode: 'tuition_income' },
-      { id: newId(), code: 'class', label: 'Class', kind: 'tuition', lessonTypeId: group.id, accountCode: 'tuition_income' },
-      { id: newId(), code: 'registration', label: 'Registration', kind: 'registration', lessonTypeId: null, accountCode: 'fee_income' },
-      { id: newId(), code: 'trial', label: 'Trial lesson', kind: 'trial', lessonTypeId: null, accountCode: 'fee_income' },
-    ] as const;
-    for (const product of products) await insertProduct(trx, { ...product, taxClass: 'tuition' });
     const approvedBy = owner.actor.personId;
-    for (const [lengthMinutes, amountMinor] of LESSON_PRICES) await insertPrice(trx, { id: newId(), productId: products[0].id, siteId: null, lengthMinutes, amountMinor, validFrom, validTo: null, approvedBy });
-    await insertPrice(trx, { id: newId(), productId: products[1].id, siteId: null, lengthMinutes: null, amountMinor: 1600, validFrom, validTo: null, approvedBy });
-    await insertPrice(trx, { id: newId(), productId: products[2].id, siteId: null, lengthMinutes: null, amountMinor: 3000, validFrom, validTo: null, approvedBy });
-    await insertPrice(trx, { id: newId(), productId: products[3].id, siteId: null, lengthMinutes: null, amountMinor: 2500, validFrom, validTo: null, approvedBy });
+    for (const [lengthMinutes, amountMinor] of LESSON_PRICES) await insertPrice(trx, { id: newId(), productId: idOf('lesson'), siteId: null, lengthMinutes, amountMinor, validFrom, validTo: null, approvedBy });
+    await insertPrice(trx, { id: newId(), productId: idOf('class'), siteId: null, lengthMinutes: null, amountMinor: 1600, validFrom, validTo: null, approvedBy });
+    await insertPrice(trx, { id: newId(), productId: idOf('registration'), siteId: null, lengthMinutes: null, amountMinor: 3000, validFrom, validTo: null, approvedBy });
+    await insertPrice(trx, { id: newId(), productId: idOf('trial'), siteId: null, lengthMinutes: null, amountMinor: 2500, validFrom, validTo: null, approvedBy });
     await insertTaxRate(trx, { id: newId(), legalEntityId, taxClass: 'tuition', treatment: 'exempt', rateBp: 0, exemptionReason: 'Demo setting: private tuition. Check your local rules.', validFrom, approvedBy });
     await insertDiscountRule(trx, { id: newId(), code: 'second_child', label: 'Second child', qualifies: 'second_child', rateBp: 1000, orderNo: 1, familyId: null, validFrom, approvedBy });
     await insertDiscountRule(trx, { id: newId(), code: 'multi_lesson', label: 'Second lesson', qualifies: 'multi_lesson', rateBp: 500, orderNo: 2, familyId: null, validFrom, approvedBy });

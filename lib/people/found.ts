@@ -1,6 +1,10 @@
 /** One thing that Find shows: what it is called, what it is, where it leads. */
 export type Found = { title: string; detail: string; href: string };
 
+/** Somebody chosen in a form. */
+export type PickedKind = 'student' | 'teacher';
+export type PickedPerson = { id: string; name: string; detail: string };
+
 const MONTHS = ['jan', 'feb', 'mar', 'apr', 'may', 'jun', 'jul', 'aug', 'sep', 'oct', 'nov', 'dec'];
 
 /**

@@ -26,3 +26,16 @@ export type SetUpInput = z.input<typeof setUpSchema>;
 export const setPasswordSchema = z.object({ token: z.string().min(20).max(200), password: newPasswordSchema });
 export const resetRequestSchema = z.object({ email });
 export const switchHatSchema = z.object({ role: z.enum(['owner', 'desk', 'teacher', 'student', 'guardian']) });
+
+export const inviteSchema = z.object({
+  personId: z.string().min(1, 'Choose a person.').max(64),
+  email,
+  role: z.enum(['owner', 'desk', 'teacher', 'student', 'guardian'], 'Choose a role.'),
+  isLead: z.boolean().default(false),
+});
+export const userSchema = z.object({ userId: z.string().min(1).max(64) });
+export const newStaffSchema = z.object({
+  name: name('the name'),
+  email,
+  role: z.enum(['owner', 'desk'], 'Choose a role.'),
+});

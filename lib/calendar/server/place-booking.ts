@@ -3,6 +3,7 @@ import type { Trx } from '@/db/connection';
 import { insertHolds, isHoldOverlap, type Holder } from '@/db/holds';
 import { insertOccurrence, insertSeats, type NewSeat } from '@/db/occurrences';
 import { findRoom } from '@/db/rooms';
+import { houseRulesOn } from '@/db/settings';
 import { AppError } from '@/lib/errors';
 import type { Context } from '@/lib/server/context';
 import { newId } from '@/lib/server/ids';
@@ -36,7 +37,7 @@ export async function writeBooking(trx: Trx, { actor }: Pick<Context, 'actor'>, 
   await insertOccurrence(trx, {
     id, ...span, seriesId: wish.seriesId ?? null, lessonTypeId: wish.lessonType.id, subjectId: wish.subjectId, title: wish.title,
     localDate: wish.localDate, startMin: wish.startMin, lengthMinutes: wish.lengthMinutes, zone: wish.zone, siteId: wish.siteId, roomId: wish.roomId,
-    plannedTeacherId: wish.teacherId, mode: wish.mode, cancelDeadlineAt: cancelDeadlineOf(wish), createdBy: actor.personId,
+    plannedTeacherId: wish.teacherId, mode: wish.mode, cancelDeadlineAt: cancelDeadlineOf(wish, (await houseRulesOn(trx, wish.localDate))['cancel.days_before']), createdBy: actor.personId,
   });
   await insertSeats(trx, wish.studentIds.map((studentId) => ({ id: newId(), occurrenceId: id, studentId, enrolmentId: wish.enrolmentOf?.get(studentId) ?? null, source: wish.source })));
   await takeHolds(trx, id, wish, span);

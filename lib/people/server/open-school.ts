@@ -3,6 +3,7 @@ import { insertAccount, grantRole } from '@/db/accounts';
 import type { Db, Trx } from '@/db/connection';
 import { insertLessonTypes, insertSubject } from '@/db/lesson-types';
 import { insertContact, insertPerson } from '@/db/people';
+import { insertProduct } from '@/db/prices';
 import { ensureFeature, insertLegalEntity, insertOpeningSpans, insertSite } from '@/db/rooms';
 import { findSchool, insertSchool } from '@/db/school';
 import { recordAudit } from '@/db/audit';
@@ -40,6 +41,18 @@ export async function openSchool(input: SetUp, { db, now }: Moment): Promise<Ope
   });
 }
 
+/** What is charged for. Prices and the treatment of tax are the owner's to set: nothing is guessed, and nothing is billed before. */
+async function layProducts(trx: Trx, types: readonly { id: string; code: string }[]): Promise<void> {
+  const typeOf = (code: string) => types.find((type) => type.code === code)?.id ?? null;
+  const products = [
+    { code: 'lesson', label: 'Lesson', kind: 'tuition', lessonTypeId: typeOf('single'), accountCode: 'tuition_income' },
+    { code: 'class', label: 'Class', kind: 'tuition', lessonTypeId: typeOf('group'), accountCode: 'tuition_income' },
+    { code: 'registration', label: 'Registration', kind: 'registration', lessonTypeId: null, accountCode: 'fee_income' },
+    { code: 'trial', label: 'Trial lesson', kind: 'trial', lessonTypeId: null, accountCode: 'fee_income' },
+  ] as const;
+  for (const product of products) await insertProduct(trx, { id: newId(), taxClass: 'tuition', ...product });
+}
+
 const WEEKDAYS_OPEN = [1, 2, 3, 4, 5, 6];
 
 async function layFoundation(trx: Trx, input: SetUp): Promise<{ siteId: string; subjectId: string; legalEntityId: string }> {
@@ -47,8 +60,10 @@ async function layFoundation(trx: Trx, input: SetUp): Promise<{ siteId: string; 
   await insertLegalEntity(trx, { id: legalEntityId, name: input.schoolName, country: input.country, currency: input.currency });
   await insertSite(trx, { id: siteId, legalEntityId, name: input.siteName, zone: input.zone, orderNo: 1 });
   await insertOpeningSpans(trx, WEEKDAYS_OPEN.map((weekday) => ({ id: newId(), siteId, weekday, fromMin: 9 * 60, toMin: 21 * 60 })));
-  await insertLessonTypes(trx, FIRST_LESSON_TYPES.map((type) => ({ id: newId(), ...type })));
+  const types = FIRST_LESSON_TYPES.map((type) => ({ id: newId(), ...type }));
+  await insertLessonTypes(trx, types);
   await insertSubject(trx, { id: subjectId, ...FIRST_SUBJECT });
+  await layProducts(trx, types);
   for (const feature of FIRST_FEATURES) await ensureFeature(trx, { id: newId(), ...feature });
   return { siteId, subjectId, legalEntityId };
 }

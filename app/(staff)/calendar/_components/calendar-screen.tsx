@@ -37,6 +37,7 @@ export function CalendarScreen({ choices, first, date, today, zone, locale, week
   const [span, setSpan] = useState<{ from: number; until: number } | null>(null);
   const { data, isError, refetch } = useCalendar(span ? { ...span, teacherId: who.teacherId ?? undefined, roomId: who.roomId ?? undefined } : null);
   const events = useMemo(() => (data ?? []).map(toEvent), [data]);
+  const hours = useMemo(() => shownHours(data ?? []), [data]);
   const isNarrow = window.matchMedia('(max-width: 760px)').matches;
   const schoolNow = () => { const at = Math.floor(Date.now() / 1000); return wallTime(localDateOf(at, zone), minuteOfDayOf(at, zone)); };
   return (
@@ -52,7 +53,7 @@ export function CalendarScreen({ choices, first, date, today, zone, locale, week
         plugins={PLUGINS} timeZone="UTC" now={schoolNow} locale={locale} firstDay={weekStart % 7} initialDate={date} initialView={isNarrow ? 'listWeek' : 'timeGridWeek'}
         headerToolbar={{ start: 'prev,today,next', center: 'title', end: isNarrow ? 'listWeek,timeGridDay' : 'timeGridWeek,dayGridMonth,listWeek' }}
         buttons={{ today: { text: 'Today' }, timeGridWeek: { text: 'Week' }, dayGridMonth: { text: 'Month' }, listWeek: { text: 'List' }, timeGridDay: { text: 'Day' } }}
-        slotMinTime="09:00:00" slotMaxTime="21:00:00" slotDuration="00:30:00" nowIndicator allDayText="all day" height="auto" tableHeaderSticky={false}
+        slotMinTime={hours.from} slotMaxTime={hours.to} slotDuration="00:15:00" slotHeaderInterval="01:00" nowIndicator allDayText="all day" height="auto" tableHeaderSticky={false}
         eventTimeFormat={{ hour: '2-digit', minute: '2-digit', hour12: false }} slotHeaderFormat={{ hour: '2-digit', minute: '2-digit', hour12: false }}
         noEventsText="Nothing in this week." events={events}
         eventClass={({ event }) => CLASSES[(event.extendedProps.entry as CalendarEntry).colour] ?? 'rw-petrol'}
@@ -63,6 +64,14 @@ export function CalendarScreen({ choices, first, date, today, zone, locale, week
       <p className="sr-only" aria-live="polite">{data ? `${data.length} entries` : 'Loading'} {today}</p>
     </div>
   );
+}
+
+/** The hours in which something happens, at least a teaching afternoon. */
+function shownHours(entries: readonly CalendarEntry[]): { from: string; to: string } {
+  const timed = entries.filter(({ lengthMinutes }) => lengthMinutes < 1440);
+  const from = Math.min(13 * 60, ...timed.map(({ startMin }) => startMin));
+  const to = Math.max(19 * 60, ...timed.map(({ startMin, lengthMinutes }) => startMin + lengthMinutes));
+  return { from: `${clockOf(Math.floor(from / 60) * 60)}:00`, to: `${String(Math.min(24, Math.ceil(to / 60))).padStart(2, '0')}:00:00` };
 }
 
 function EntryWords({ entry }: { entry: CalendarEntry }) {

@@ -1,0 +1,20 @@
+'use server';
+
+import { revalidatePath } from 'next/cache';
+import { inviteSchema, newStaffSchema, userSchema } from '@/lib/people/schema';
+import { endAccess } from '@/lib/people/server/access';
+import { addStaff } from '@/lib/people/server/add-staff';
+import { changeHouseRule, changeRuleSchema } from '@/lib/people/server/house-rules';
+import { invitePerson } from '@/lib/people/server/invite-person';
+import { action } from '@/lib/server/action';
+import { changePriceSchema, changeTaxSchema } from '@/lib/tuition/price-schema';
+import { setPrice, setTax } from '@/lib/tuition/server/price-list';
+
+const fresh = () => revalidatePath('/settings');
+
+export const savePrice = action(changePriceSchema, async (input, context) => { await setPrice(input, context); fresh(); });
+export const saveTax = action(changeTaxSchema, async (input, context) => { await setTax(input, context); fresh(); });
+export const saveRule = action(changeRuleSchema, async (input, context) => { await changeHouseRule(input, context); fresh(); });
+export const invite = action(inviteSchema, async (input, context) => { const invited = await invitePerson(input, context); fresh(); return invited; });
+export const inviteNew = action(newStaffSchema, async (input, context) => { const invited = await addStaff(input, context); fresh(); return invited; });
+export const shutOut = action(userSchema, async (input, context) => { await endAccess(input, context); fresh(); });

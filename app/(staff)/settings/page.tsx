@@ -1,0 +1,29 @@
+import { PageHeader } from '@/components/ui/page-header';
+import { Tabs } from '@/components/ui/tabs';
+import { readAccess } from '@/lib/people/server/access';
+import { readHouseRules } from '@/lib/people/server/house-rules';
+import { requireContextTo } from '@/lib/server/context';
+import { readPriceList } from '@/lib/tuition/server/price-list';
+import { AccessTab } from './_components/access-tab';
+import { PricesTab } from './_components/prices-tab';
+import { RulesTab } from './_components/rules-tab';
+import { TaxTab } from './_components/tax-tab';
+
+export const metadata = { title: 'Settings' };
+
+export default async function SettingsPage() {
+  const context = await requireContextTo('update', 'Settings');
+  const { school, today } = context;
+  const [list, access, rules] = [await readPriceList(context), await readAccess(context), await readHouseRules(context)];
+  return (
+    <>
+      <PageHeader title="Settings" sub="Every price, rule and tax treatment has a first day. What was billed or marked before keeps the rule of its day." />
+      <Tabs label="Settings" tabs={[
+        { key: 'prices', label: 'Prices', content: <PricesTab list={list} school={school} today={today} /> },
+        { key: 'tax', label: 'Tax', content: <TaxTab list={list} locale={school.locale} today={today} /> },
+        { key: 'rules', label: 'House rules', content: <RulesTab rules={rules.rules} history={rules.history} locale={school.locale} today={today} /> },
+        { key: 'access', label: 'Access', content: <AccessTab accounts={access.accounts} without={access.without} locale={school.locale} zone={school.zone} /> },
+      ]} />
+    </>
+  );
+}
