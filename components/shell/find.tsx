@@ -5,27 +5,17 @@ import { Command } from 'cmdk';
 import { Search } from 'lucide-react';
 import { useRouter } from 'next/navigation';
 import { Dialog as Primitive } from 'radix-ui';
-import { useEffect, useState } from 'react';
+import { useEffect, useEffectEvent, useState } from 'react';
 import { getJson } from '@/lib/http/get-json';
 import type { Found } from '@/lib/people/found';
+import { KeyHint } from '../ui/key-hint';
 
 /** Find: people, rooms, dates and invoices from anywhere, with `/` or Ctrl-K. */
 export function Find() {
   const router = useRouter();
   const [open, setOpen] = useState(false);
   const [text, setText] = useState('');
-  useEffect(() => {
-    const onKey = (event: KeyboardEvent) => {
-      const isTyping = event.target instanceof HTMLElement && (event.target.isContentEditable || /^(INPUT|TEXTAREA|SELECT)$/.test(event.target.tagName));
-      const isSlash = event.key === '/' && !isTyping && !event.ctrlKey && !event.metaKey && !event.altKey;
-      const isControlK = event.key.toLowerCase() === 'k' && (event.ctrlKey || event.metaKey);
-      if (!isSlash && !isControlK) return;
-      event.preventDefault();
-      setOpen(true);
-    };
-    document.addEventListener('keydown', onKey);
-    return () => document.removeEventListener('keydown', onKey);
-  }, []);
+  useFindKeys(() => setOpen(true));
   const { data, isFetching, isError } = useQuery({ queryKey: ['find', text], queryFn: () => getJson<Found[]>('/api/find', { text }), enabled: open && text.trim().length > 1, placeholderData: (previous) => previous });
   const go = (href: string) => {
     setOpen(false);
@@ -37,7 +27,7 @@ export function Find() {
       <button type="button" onClick={() => setOpen(true)} className="flex items-center justify-between gap-3 rounded border border-rule-strong bg-sheet px-3 py-[9px] text-[14px] text-ink-3 max-md:size-11 max-md:justify-center max-md:px-0 md:w-[250px]">
         <Search size={18} aria-hidden className="md:hidden" />
         <span className="max-md:sr-only">Find a person, room or date</span>
-        <kbd className="rounded-[3px] border border-rule px-[5px] text-[11px] font-semibold max-md:hidden">/</kbd>
+        <KeyHint keys="/" />
       </button>
       <Primitive.Root open={open} onOpenChange={setOpen}>
         <Primitive.Portal>
@@ -63,4 +53,22 @@ export function Find() {
       </Primitive.Root>
     </>
   );
+}
+
+const isTypingPlace = (target: EventTarget | null): boolean => target instanceof HTMLElement && (target.isContentEditable || /^(INPUT|TEXTAREA|SELECT)$/.test(target.tagName));
+const isPlainSlash = (event: KeyboardEvent): boolean => event.key === '/' && !event.ctrlKey && !event.metaKey && !event.altKey && !isTypingPlace(event.target);
+const isControlK = (event: KeyboardEvent): boolean => event.key.toLowerCase() === 'k' && (event.ctrlKey || event.metaKey);
+
+/** `/` outside of fields, Ctrl-K (or the command key) anywhere. */
+function useFindKeys(open: () => void): void {
+  const latest = useEffectEvent(open);
+  useEffect(() => {
+    const onKey = (event: KeyboardEvent) => {
+      if (!isPlainSlash(event) && !isControlK(event)) return;
+      event.preventDefault();
+      latest();
+    };
+    document.addEventListener('keydown', onKey);
+    return () => document.removeEventListener('keydown', onKey);
+  }, []);
 }

@@ -1,4 +1,5 @@
-import { useId, type ComponentProps, type ReactNode } from 'react';
+import { useId, type ComponentProps, type FocusEvent, type ReactNode } from 'react';
+import { clockOf, minuteOfClock } from '@/lib/time';
 import { Field, INPUT } from './field';
 
 type Labelled = { label: ReactNode; help?: ReactNode; error?: string; optional?: boolean; fieldClass?: string };
@@ -38,9 +39,24 @@ export function DateField(props: Labelled & ComponentProps<'input'>) {
   return <TextField {...props} type="date" />;
 }
 
-/** Snaps to five minutes with the arrows; any minute can still be typed and is put right by the form. */
-export function TimeField(props: Labelled & ComponentProps<'input'>) {
-  return <TextField {...props} type="time" step={300} />;
+/** Snaps to five minutes: with the arrows, and on leaving the field whatever was typed. */
+export function TimeField({ onBlur, onChange, ...props }: Labelled & ComponentProps<'input'>) {
+  const snap = (event: FocusEvent<HTMLInputElement>) => {
+    const snapped = toFiveMinutes(event.target.value);
+    if (snapped !== null && snapped !== event.target.value) {
+      event.target.value = snapped;
+      onChange?.(event);
+    }
+    onBlur?.(event);
+  };
+  return <TextField {...props} type="time" step={300} onChange={onChange} onBlur={snap} />;
+}
+
+const LAST_MINUTE = 23 * 60 + 55;
+
+function toFiveMinutes(typed: string): string | null {
+  const minute = minuteOfClock(typed);
+  return minute === null ? null : clockOf(Math.min(LAST_MINUTE, Math.round(minute / 5) * 5));
 }
 
 /** Accepts "12,50" and "12.50"; the amount is read by the form's own rules, never as a float. */

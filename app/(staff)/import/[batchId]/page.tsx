@@ -27,7 +27,7 @@ export default async function ImportBatchPage({ params }: { params: Promise<{ ba
       {control ? (
         <div className="grid items-start gap-[18px] lg:grid-cols-[minmax(0,1fr)_340px]">
           <RowTables sheets={detail.sheets} readings={detail.readings} />
-          <div className="flex flex-col gap-[14px]">
+          <div className="flex flex-col gap-[14px] max-lg:order-first">
             {state === 'checked' ? <ChoicesForm detail={detail} key={JSON.stringify([detail.choices, detail.readings])} /> : null}
             {state === 'imported' ? <UndoSheet batchId={detail.batchId} fileName={detail.fileName} obstacles={detail.obstacles} /> : null}
             <ControlSheet control={control} currency={detail.currency} locale={detail.locale} />

@@ -18,7 +18,7 @@ const COLUMNS: Column<PreviewRow>[] = [
   { id: 'row', header: 'Row', align: 'right', value: ({ rowNo }) => rowNo },
   { id: 'title', header: 'Who or what', isTitle: true, value: ({ title }) => title, cell: ({ title }) => (title === '' ? <span className="font-normal text-ink-3">no name</span> : title) },
   { id: 'verdict', header: 'Verdict', value: ({ verdict }) => VERDICT_WORDS[verdict], cell: ({ verdict }) => <Chip tone={TONES[verdict]}>{VERDICT_WORDS[verdict]}</Chip> },
-  { id: 'reason', header: 'Why', value: ({ reason }) => reason },
+  { id: 'reason', header: 'Why', value: ({ reason }) => reason, cell: ({ reason }) => (reason === '' ? '' : <span className="block md:min-w-[24ch]">{reason}</span>) },
   { id: 'cells', header: 'In the sheet', value: ({ cells }) => cells.filter((cell) => cell !== '').join(' · '), cell: ({ cells }) => <span className="text-small text-ink-3">{cells.filter((cell) => cell !== '').join(' · ')}</span> },
 ];
 
