@@ -20,7 +20,7 @@ export function familyBillOf(familyId: string, enrolments: readonly BilledEnrolm
   if (!first) return null;
   const words: MoneyWords = { currency: first.currency, locale: facts.manner.locale };
   const before = facts.before.get(familyId) ?? null;
-  const lastTotalMinor = before === null ? null : before.reduce((sum, { netMinor }) => sum + netMinor, 0);
+  const lastTotalMinor = before === null || before.length === 0 ? null : before.reduce((sum, { netMinor }) => sum + netMinor, 0);
   const problems: string[] = [];
   const lines = [...enrolments.flatMap((enrolment) => tuitionLines(enrolment, { facts, words, problems })), ...registrationLines(enrolments, facts)];
   if (lines.length === 0 && problems.length === 0) return null;

@@ -13,7 +13,7 @@ import { addDays, addMonths, isLocalDate } from '@/lib/time';
 import { assertCan } from '@/policies/ability';
 import type { InstalmentPlan } from '../instalments';
 import type { previewRunSchema } from '../schema';
-import { groupBy, readBillingFacts, type BillingPeriod } from './billing-facts';
+import { groupBy, readBillingFacts, type BillingFacts, type BillingPeriod } from './billing-facts';
 import { familyBillOf, type FamilyBill } from './family-bill';
 
 type Preview = z.output<typeof previewRunSchema>;
@@ -73,14 +73,23 @@ async function openRun(trx: Trx, { actor, today }: Context, { input, period, ter
 }
 
 async function workOut(trx: Trx, { school }: Context, period: BillingPeriod, plan: InstalmentPlan): Promise<FamilyBill[]> {
-  const facts = await readBillingFacts(trx, period, plan, school);
+  const read = await readBillingFacts(trx, period, plan, school);
+  const isLater = await hasReleasedRun(trx, period.kind, period.from);
+  const facts = isLater ? { ...read, before: withoutBilled(read) } : read;
   const families = groupBy(facts.enrolments, ({ familyId }) => familyId);
   const bills = [...families].flatMap(([familyId, enrolments]) => familyBillOf(familyId, enrolments, facts) ?? []);
-  if (await hasReleasedRun(trx, period.kind, period.from)) return bills;
+  if (isLater) return bills;
   const gone = [...facts.before].filter(([familyId]) => !bills.some((bill) => bill.familyId === familyId)).map(([familyId, lines]): FamilyBill => ({
     familyId, bill: null, problem: '', difference: { kind: 'gone', sentence: 'Nothing to charge any more' }, lastTotalMinor: lines.reduce((sum, { netMinor }) => sum + netMinor, 0),
   }));
   return [...bills, ...gone];
+}
+
+/** A later run of the same period is compared only by what it charges: what was billed before has not ended. */
+function withoutBilled({ before, billed }: BillingFacts): BillingFacts['before'] {
+  const isBilled = (familyId: string, id: string) => (billed.get(familyId) ?? []).some(({ enrolmentId }) => enrolmentId === id);
+  const families = new Set([...before.keys(), ...billed.keys()]);
+  return new Map([...families].map((familyId) => [familyId, (before.get(familyId) ?? []).filter(({ enrolmentId }) => !isBilled(familyId, enrolmentId))]));
 }
 
 function itemOf(runId: string, { familyId, bill, problem, difference, lastTotalMinor }: FamilyBill): Omit<TuitionRunItem, 'heldReason' | 'invoiceId'> {

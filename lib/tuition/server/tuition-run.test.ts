@@ -175,6 +175,9 @@ describe('release', () => {
     const { runId } = await preview();
     expect(await itemsOfRun(db, runId)).toEqual([]);
     expect(await db('tuition_run').where({ id: runId }).first()).toMatchObject({ label: 'Autumn 2026/27, later enrolments' });
+    await enrolled(db, { studentId: 'ben', dates: dates(4), startMin: 720 });
+    await preview();
+    expect(await itemOf(runId)).toMatchObject({ totalMinor: 52_920, changeKind: 'changed', changeText: 'New: Ben Vale: Keyboard harmony', lastTotalMinor: null });
   });
 
   it('compares the next term with this one', async () => {

@@ -19,7 +19,6 @@ export function ReleaseRun({ run, locale }: { run: RunDetail; locale: string }) 
   const [jobId, setJobId] = useState<string | null>(null);
   const [error, setError] = useState<string>();
   const [pending, startTransition] = useTransition();
-  if (run.state === 'released' || run.state === 'dropped') return null;
   const planned = plannedOf(run).length;
   const confirm = () => startTransition(async () => {
     const result = await release({ runId: run.runId, controlTotalMinor: run.controlTotalMinor }).catch(() => null);
@@ -36,14 +35,22 @@ export function ReleaseRun({ run, locale }: { run: RunDetail; locale: string }) 
     <>
       {error && !isAsking ? <p role="alert" className="text-small text-brick">{error}</p> : null}
       {run.state === 'preview' ? <Button pending={pending && !isAsking} onClick={again}>Work out again</Button> : null}
-      <Button kind="brass" disabled={planned === 0 && run.state === 'preview'} onClick={() => { setError(undefined); setIsAsking(true); }}>{run.state === 'releasing' ? 'Go on releasing' : 'Release'}</Button>
+      {run.state === 'preview' || run.state === 'releasing' ? <Button kind="brass" disabled={planned === 0 && run.state === 'preview'} onClick={() => { setError(undefined); setIsAsking(true); }}>{run.state === 'releasing' ? 'Go on releasing' : 'Release'}</Button> : null}
       <ConfirmDialog open={isAsking} onOpenChange={setIsAsking} title={`Release ${run.label}?`} kind="brass" confirmLabel={`Release ${plural(planned, 'bill')}`} pending={pending} error={error} onConfirm={confirm}
         consequences={consequencesOf(run, locale)} />
-      <Dialog open={jobId !== null} onOpenChange={(open) => !open && setJobId(null)} title="Releasing" description="You can leave this page; the work goes on.">
-        {jobId ? <JobProgress jobId={jobId} onEnd={() => router.refresh()} /> : null}
-        <div className="mt-4 flex justify-end"><Button onClick={() => setJobId(null)}>Close</Button></div>
-      </Dialog>
+      <ReleaseProgress jobId={jobId} isDone={run.state === 'released'} onClose={() => setJobId(null)} onEnd={() => router.refresh()} />
     </>
+  );
+}
+
+type ProgressProps = { jobId: string | null; isDone: boolean; onClose: () => void; onEnd: () => void };
+
+function ReleaseProgress({ jobId, isDone, onClose, onEnd }: ProgressProps) {
+  return (
+    <Dialog open={jobId !== null} onOpenChange={(open) => !open && onClose()} title={isDone ? 'Released' : 'Releasing'} description={isDone ? 'Every bill has its number, and the mails are on their way.' : 'You can leave this page; the work goes on.'}>
+      {jobId ? <JobProgress jobId={jobId} onEnd={onEnd} /> : null}
+      <div className="mt-4 flex justify-end"><Button onClick={onClose}>{isDone ? 'See the run' : 'Leave it running'}</Button></div>
+    </Dialog>
   );
 }
 
