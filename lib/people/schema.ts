@@ -1,5 +1,5 @@
 import * as z from 'zod';
-import { isZone } from '../time';
+import { isLocalDate, isZone } from '../time';
 import { passwordFault } from './passwords';
 
 const name = (what: string) => z.string().trim().min(1, `Enter ${what}.`).max(120, 'At most 120 characters.');
@@ -38,4 +38,11 @@ export const newStaffSchema = z.object({
   name: name('the name'),
   email,
   role: z.enum(['owner', 'desk'], 'Choose a role.'),
+});
+
+const day = z.string().refine(isLocalDate, 'Enter a date.');
+export const backgroundCheckSchema = z.object({
+  personIds: z.array(z.string().max(64)).min(1, 'Choose at least one teacher.').max(200),
+  issuedOn: day,
+  expiresOn: day,
 });

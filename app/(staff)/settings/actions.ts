@@ -1,11 +1,12 @@
 'use server';
 
 import { revalidatePath } from 'next/cache';
-import { inviteSchema, newStaffSchema, userSchema } from '@/lib/people/schema';
+import { backgroundCheckSchema, inviteSchema, newStaffSchema, userSchema } from '@/lib/people/schema';
 import { endAccess } from '@/lib/people/server/access';
 import { addStaff } from '@/lib/people/server/add-staff';
 import { changeHouseRule, changeRuleSchema } from '@/lib/people/server/house-rules';
 import { invitePerson } from '@/lib/people/server/invite-person';
+import { recordBackgroundCheck } from '@/lib/people/server/staff-papers';
 import { action } from '@/lib/server/action';
 import { changePriceSchema, changeTaxSchema } from '@/lib/tuition/price-schema';
 import { setPrice, setTax } from '@/lib/tuition/server/price-list';
@@ -18,3 +19,4 @@ export const saveRule = action(changeRuleSchema, async (input, context) => { awa
 export const invite = action(inviteSchema, async (input, context) => { const invited = await invitePerson(input, context); fresh(); return invited; });
 export const inviteNew = action(newStaffSchema, async (input, context) => { const invited = await addStaff(input, context); fresh(); return invited; });
 export const shutOut = action(userSchema, async (input, context) => { await endAccess(input, context); fresh(); });
+export const saveCheck = action(backgroundCheckSchema, async (input, context) => { const recorded = await recordBackgroundCheck(input, context); fresh(); return recorded; });
