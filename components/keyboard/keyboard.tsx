@@ -34,7 +34,7 @@ export function Keyboard({ lowest, highest, label, held, marks, onDown, onUp }: 
   };
   return (
     <div className="overflow-x-auto pb-1" tabIndex={-1}>
-      <svg viewBox={`0 0 ${width} ${WHITE_HEIGHT + FOOT_HEIGHT}`} role="group" aria-label={label} onKeyDown={steer} className="block w-full select-none pointer-coarse:min-w-[calc(var(--whites)*26px)]" style={{ ['--whites' as string]: countWhite(lowest, highest) }}>
+      <svg viewBox={`0 0 ${width} ${WHITE_HEIGHT + FOOT_HEIGHT}`} role="group" aria-label={label} onKeyDown={steer} className="block w-full select-none max-md:min-w-[calc(var(--whites)*26px)]" style={{ ['--whites' as string]: countWhite(lowest, highest) }}>
         {shapes.map((shape) => (
           <PianoKey key={shape.key} shape={shape} isHeld={held.has(shape.key)} mark={marks?.get(shape.key)} isTabStop={shape.key === active} canPlay={onDown !== undefined}
             onFocus={() => setFocused(shape.key)} onDown={() => onDown?.(shape.key)} onUp={() => onUp?.(shape.key)} />

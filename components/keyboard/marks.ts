@@ -1,5 +1,5 @@
 import { degreeWords, printedDegree, type VoicedNote } from '@/lib/harmony/degree';
-import { printedNote, spokenNote, type KeyNumber } from '@/lib/harmony/note';
+import { spokenNote, type KeyNumber } from '@/lib/harmony/note';
 import { roleOf } from '@/lib/harmony/tones';
 import type { KeyMark } from './keyboard';
 
@@ -11,6 +11,3 @@ export function marksOf(notes: readonly VoicedNote[]): Map<KeyNumber, KeyMark> {
     return [key, { text: printedDegree(degree), role: look, spoken: `${degreeWords(degree)}, ${spokenNote(note)}` }];
   }));
 }
-
-/** "D3 G3 C4 F4 A4". */
-export const notesLine = (notes: readonly VoicedNote[]): string => notes.map(({ note }) => printedNote(note)).join(' ');

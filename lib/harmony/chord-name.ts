@@ -15,7 +15,7 @@ export function chordName({ root, bass, suffix }: Pick<Chord, 'root' | 'bass' | 
   return printedNote(root) + printedSuffix(suffix, style) + (bass ? `/${printedNote(bass)}` : '');
 }
 
-export function printedSuffix(suffix: string, style: ChordStyle = 'words'): string {
+function printedSuffix(suffix: string, style: ChordStyle = 'words'): string {
   const signed = style === 'signs' ? TO_SIGNS.reduce((text, [from, to]) => text.replace(from, to), suffix) : suffix;
   const alterations = signed.match(ALTERATION) ?? [];
   const isBracketed = alterations.length > 1 && !signed.includes('(');

@@ -5,13 +5,7 @@ import { missingNeeds, type Need } from './needs';
  * Where a student stands on a rung. Passed is never silently taken away: a doubt makes it "re-check due", and
  * only a later hearing decides.
  */
-export const RUNG_STATES = ['locked', 'open', 'working', 'passed', 'recheck_due', 'credited'] as const;
-export type RungState = (typeof RUNG_STATES)[number];
-
-/** As read on the ladder; a word always stands beside the colour. */
-export const RUNG_STATE_WORDS: Record<RungState, string> = {
-  locked: 'locked', open: 'open', working: 'being worked on', passed: 'passed', recheck_due: 're-check due', credited: 'credited',
-};
+export type RungState = 'locked' | 'open' | 'working' | 'passed' | 'recheck_due' | 'credited';
 
 export type RungFact =
   | { kind: 'hearing'; rung: string; outcome: 'passed' | 'not_yet'; at: EpochSeconds; on: LocalDate; hearingId: string }

@@ -103,3 +103,19 @@ describe('school ladder', () => {
     expect(await schoolLadder(contextOf(db, 'owner'))).toBeNull();
   });
 });
+
+describe('a published report (invariant 5)', () => {
+  it('is for good, except that the family may say it was read, once', async () => {
+    const { db } = await house();
+    const [edition]: { id: string }[] = await db('ladder_edition');
+    await db('term_report').insert({ id: 'report', studentId: 'ines', termId: 'autumn', editionId: edition?.id, authorId: 'greta' });
+    await db('report_section').insert({ id: 'words', termReportId: 'report', kind: 'teacher', text: 'A lovely term.' });
+    await db('term_report').where({ id: 'report' }).update({ state: 'published', approverId: 'leif', publishedAt: NOW });
+    await expect(db('term_report').where({ id: 'report' }).update({ factsJson: '{"more":1}' })).rejects.toThrow('report_fixed');
+    await expect(db('term_report').where({ id: 'report' }).delete()).rejects.toThrow();
+    await expect(db('report_section').where({ id: 'words' }).update({ text: 'Other' })).rejects.toThrow('report_fixed');
+    await expect(db('report_section').insert({ id: 'more', termReportId: 'report', kind: 'at_home', text: 'More' })).rejects.toThrow('report_fixed');
+    await db('term_report').where({ id: 'report' }).update({ acknowledgedAt: NOW + 60 });
+    await expect(db('term_report').where({ id: 'report' }).update({ acknowledgedAt: NOW + 120 })).rejects.toThrow('report_fixed');
+  });
+});

@@ -21,11 +21,13 @@ export async function schoolLadder(context: Context): Promise<SchoolLadder | nul
   if (!edition) return null;
   const [levels, rungs, needs, counts] = [await levelsOf(db, edition.id), await rungsOf(db, edition.id), await needsOf(db, edition.id), await rungCounts(db, edition.id)];
   const titles = new Map(rungs.map(({ id, code, title }) => [id, `${code} ${title}`]));
+  const order = rungs.map(({ id }) => id);
   const count = (rungId: string, matches: (state: (typeof counts)[number]['state']) => boolean) =>
     counts.filter((row) => row.rungId === rungId && matches(row.state)).reduce((sum, row) => sum + row.count, 0);
   const toRung = ({ id, code, title, plainTitle, canDo, soundsLike, criteria, keysDrawn, keysNeeded, spec }: Rung): SchoolRung => ({
     id, code, title, plainTitle, canDo, soundsLike, criteria, keysDrawn, keysNeeded, isSpoken: spec.how === 'spell' || spec.how === 'name_tensions',
-    needs: needs.filter(({ rung }) => rung === id).map((need) => ({ title: titles.get(need.needs) ?? '', kind: need.kind })),
+    needs: needs.filter(({ rung }) => rung === id).map((need) => ({ title: titles.get(need.needs) ?? '', kind: need.kind, at: order.indexOf(need.needs) }))
+      .sort((a, b) => a.at - b.at).map(({ title, kind }) => ({ title, kind })),
     passed: count(id, hasRung), working: count(id, (state) => state === 'working'),
   });
   return {

@@ -8,10 +8,10 @@ import type { Hearing } from './use-hearing';
 export function EarButtons({ hearing, label, isSmall = false }: { hearing: Hearing; label: string; isSmall?: boolean }) {
   const { takeByEar, isSending } = hearing;
   return (
-    <div role="group" aria-label={label} className={isSmall ? 'flex flex-wrap items-center gap-2' : 'mt-4 grid grid-cols-2 gap-3'}>
-      {isSmall ? <span className="text-small text-ink-3">{label}</span> : null}
-      <Button pending={isSending} icon={<Check size={16} aria-hidden />} onClick={() => takeByEar('right')} className={isSmall ? '' : 'min-h-[52px]'}>Right</Button>
-      <Button disabled={isSending} icon={<X size={16} aria-hidden />} onClick={() => takeByEar('not_right')} className={isSmall ? '' : 'min-h-[52px]'}>Not right</Button>
+    <div role="group" aria-label={label} className={isSmall ? 'grid w-full grid-cols-2 items-center gap-2 md:flex md:w-auto' : 'mt-4 grid grid-cols-2 gap-3'}>
+      {isSmall ? <span className="col-span-2 text-small text-ink-3">{label}</span> : null}
+      <Button pending={isSending} icon={<Check size={16} aria-hidden />} onClick={() => takeByEar('right')} className={isSmall ? 'max-md:min-h-[52px]' : 'min-h-[52px]'}>Right</Button>
+      <Button disabled={isSending} icon={<X size={16} aria-hidden />} onClick={() => takeByEar('not_right')} className={isSmall ? 'max-md:min-h-[52px]' : 'min-h-[52px]'}>Not right</Button>
     </div>
   );
 }

@@ -6,7 +6,7 @@ import type { HearingScreen } from '@/lib/ladder/server/hearing-screen';
 import { DecideDialog } from './decide-dialog';
 import { StopDialog } from './stop-dialog';
 
-type EarPanelProps = { hearingId: string; rung: NonNullable<HearingScreen['rung']>; keysHeard: number; student: HearingScreen['ladder']['student']; locale: string };
+type EarPanelProps = { hearingId: string; rung: NonNullable<HearingScreen['rung']>; keysHeard: number; student: HearingScreen['ladder']['student'] };
 
 /** The decision is the teacher's: the keys are the proof, the ear has the last word. */
 export function EarPanel({ hearingId, rung, keysHeard, student }: EarPanelProps) {

@@ -26,7 +26,7 @@ export function HearingDesk({ screen, locale }: { screen: HearingScreen; locale:
         </Sheet>
         <PastHearings past={past} locale={locale} />
       </div>
-      {underWay?.isOwn ? <HearingRoom screen={screen} rung={rung} underWay={underWay} locale={locale} /> : <StartPanel screen={screen} rung={rung} locale={locale} />}
+      {underWay?.isOwn ? <HearingRoom screen={screen} rung={rung} underWay={underWay} /> : <StartPanel screen={screen} rung={rung} locale={locale} />}
     </div>
   );
 }

@@ -9,12 +9,12 @@ import { HandsPanel } from './hands-panel';
 import { KeysHeard } from './keys-heard';
 import { useHearing } from './use-hearing';
 
-type HearingRoomProps = { screen: HearingScreen; rung: NonNullable<HearingScreen['rung']>; underWay: HearingUnderWay; locale: string };
+type HearingRoomProps = { screen: HearingScreen; rung: NonNullable<HearingScreen['rung']>; underWay: HearingUnderWay };
 
 /** After a right key the next one comes by itself, so that the teacher's hands stay free. */
 const GO_ON_MILLISECONDS = 1600;
 
-export function HearingRoom({ screen, rung, underWay, locale }: HearingRoomProps) {
+export function HearingRoom({ screen, rung, underWay }: HearingRoomProps) {
   const hearing = useHearing(rung, underWay);
   const [goesOn, setGoesOn] = useState(true);
   const { tries, drawnNo, next, keysHeard, isSending, told } = hearing;
@@ -30,7 +30,7 @@ export function HearingRoom({ screen, rung, underWay, locale }: HearingRoomProps
       <AskPanel hearing={hearing} rung={rung} chordStyle={screen.chordStyle} goesOn={goesOn} onGoesOn={setGoesOn} />
       <div className="grid gap-[14px]">
         <KeysHeard hearing={hearing} rung={rung} drawn={underWay.drawn} chordStyle={screen.chordStyle} />
-        <EarPanel hearingId={underWay.id} rung={rung} keysHeard={keysHeard} student={screen.ladder.student} locale={locale} />
+        <EarPanel hearingId={underWay.id} rung={rung} keysHeard={keysHeard} student={screen.ladder.student} />
         {isSpoken(rung.spec.how) ? null : <HandsPanel ask={hearing.ask} reachSemitones={screen.ladder.student.reachSemitones} />}
       </div>
     </div>

@@ -32,7 +32,7 @@ export function PlayArea({ hearing, ask, isShown }: { hearing: Hearing; ask: Ask
   useComputerKeys({ base, isOn: true, onDown: screenDown, onUp: up });
 
   const { takeKeys, isRight, isSending } = hearing;
-  const onChord = useCallback((keys: KeyNumber[], lastDownAt: number) => { takeKeys(keys, lastDownAt, source.current); if (isLatched) clear(); }, [takeKeys, isLatched, clear]);
+  const onChord = useCallback((keys: KeyNumber[], lastDownAt: number) => { takeKeys(keys, isLatched ? null : lastDownAt, source.current); if (isLatched) clear(); }, [takeKeys, isLatched, clear]);
   useChordCapture({ held, isLatched, isOn: !isSending, isRight, onChord });
 
   return (
@@ -44,7 +44,7 @@ export function PlayArea({ hearing, ask, isShown }: { hearing: Hearing; ask: Ask
       </div>
       <Keyboard {...range} label="Keyboard. Arrows move, Space plays." held={held} {...(isShown ? { marks } : {})} onDown={screenDown} onUp={up} />
       <div className="flex flex-wrap items-center gap-x-4 gap-y-2">
-        <Checkbox label="Keep keys down (one finger, or rolled)" checked={isLatched} onChange={(event) => { clear(); setIsLatched(event.target.checked); }} />
+        <Checkbox label="Keep keys down: one finger, or rolled, without the clock" checked={isLatched} onChange={(event) => { clear(); setIsLatched(event.target.checked); }} />
         {isLatched ? <Button kind="primary" icon={<Ear size={16} aria-hidden />} disabled={held.size === 0 || isSending} onClick={() => onChord([...held], performance.now())}>{`Hear these ${held.size || ''} keys`.replace('  ', ' ')}</Button> : null}
       </div>
     </div>

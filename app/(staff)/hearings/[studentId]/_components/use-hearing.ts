@@ -1,6 +1,6 @@
 'use client';
 
-import { useCallback, useMemo, useRef, useState } from 'react';
+import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
 import { asksOf, judgeAsk, type Ask } from '@/lib/ladder/asks';
 import type { KeyNumber } from '@/lib/harmony/note';
 import type { Verdict } from '@/lib/harmony/verdict';
@@ -10,7 +10,7 @@ import { sendProof } from '../../actions';
 type Rung = NonNullable<HearingScreen['rung']>;
 type Answer = { played: KeyNumber[]; milliseconds: number | null; byEar: 'right' | 'not_right' | null };
 export type Source = 'midi' | 'screen' | 'ear';
-export type Told = { name: string; verdict: Verdict | null; byEar: Answer['byEar']; milliseconds: number | null };
+export type Told = { name: string; played: readonly KeyNumber[]; verdict: Verdict | null; byEar: Answer['byEar']; milliseconds: number | null };
 
 /** The course of a hearing on the screen: which key, which chord of it, what was told last. The server keeps the proofs. */
 export function useHearing(rung: Rung, underWay: HearingUnderWay) {
@@ -21,6 +21,9 @@ export function useHearing(rung: Rung, underWay: HearingUnderWay) {
   const [problem, setProblem] = useState<string | null>(null);
   const [isSending, setIsSending] = useState(false);
   const askedAt = useRef<number | null>(null);
+
+  // The clock of the first key runs from the moment it stands on the screen.
+  useEffect(() => { askedAt.current = performance.now(); }, []);
 
   const drawn = underWay.drawn[drawnNo];
   const asks = useMemo<Ask[]>(() => (drawn ? asksOf(rung.spec, drawn) : []), [rung.spec, drawn]);
@@ -43,15 +46,18 @@ export function useHearing(rung: Rung, underWay: HearingUnderWay) {
   const take = useCallback((answer: Answer, source: Source) => {
     if (!ask || isSending) return;
     const verdict = answer.byEar === null ? judgeAsk(ask, answer.played) : null;
-    setTold({ name: ask.symbol, verdict, byEar: answer.byEar, milliseconds: answer.milliseconds });
+    setTold({ name: ask.symbol, played: answer.played, verdict, byEar: answer.byEar, milliseconds: answer.milliseconds });
     const heard = [...answers, answer];
     askedAt.current = performance.now();
     if (heard.length < asks.length) setAnswers(heard);
     else void send(heard, source);
   }, [ask, asks.length, answers, isSending, send]);
 
-  const takeKeys = useCallback((played: KeyNumber[], lastDownAt: number, source: Source) =>
-    take({ played, milliseconds: askedAt.current === null ? null : Math.max(0, Math.round(lastDownAt - askedAt.current)), byEar: null }, source), [take]);
+  /** Keys put down one by one or rolled are not timed. */
+  const takeKeys = useCallback((played: KeyNumber[], lastDownAt: number | null, source: Source) => {
+    const isTimed = askedAt.current !== null && lastDownAt !== null;
+    take({ played, milliseconds: isTimed ? Math.max(0, Math.round(lastDownAt - (askedAt.current ?? 0))) : null, byEar: null }, source);
+  }, [take]);
   const takeByEar = useCallback((byEar: 'right' | 'not_right') => take({ played: [], milliseconds: null, byEar }, 'ear'), [take]);
   const next = useCallback(() => goTo(nextUnheard(underWay, tries, drawnNo)), [goTo, underWay, tries, drawnNo]);
   const isRight = useCallback((keys: KeyNumber[]) => ask !== undefined && judgeAsk(ask, keys).isRight, [ask]);

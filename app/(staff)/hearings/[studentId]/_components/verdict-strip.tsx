@@ -3,6 +3,8 @@
 import { CircleCheck, CircleDot, TriangleAlert } from 'lucide-react';
 import { chordName, type ChordStyle } from '@/lib/harmony/chord-name';
 import { chordOf } from '@/lib/harmony/chord';
+import { readingsOf } from '@/lib/harmony/readings';
+import type { Verdict } from '@/lib/harmony/verdict';
 import type { Hearing, Told } from './use-hearing';
 
 const secondsWords = (milliseconds: number): string => `${(milliseconds / 1000).toFixed(1)} s`;
@@ -13,12 +15,12 @@ export function VerdictStrip({ hearing, seconds, chordStyle }: { hearing: Hearin
   return (
     <div aria-live="polite" className="mt-3 min-h-[46px]">
       {problem ? <p className="flex gap-2 rounded bg-brick-wash px-3 py-[10px] text-brick"><TriangleAlert size={18} aria-hidden className="mt-[2px] shrink-0" />{problem}</p> : null}
-      {told && !problem ? <Verdict told={told} seconds={seconds} chordStyle={chordStyle} isNamed={asks.length > 1} /> : null}
+      {told && !problem ? <VerdictWords told={told} seconds={seconds} chordStyle={chordStyle} isNamed={asks.length > 1} /> : null}
     </div>
   );
 }
 
-function Verdict({ told, seconds, chordStyle, isNamed }: { told: Told; seconds: number | undefined; chordStyle: ChordStyle; isNamed: boolean }) {
+function VerdictWords({ told, seconds, chordStyle, isNamed }: { told: Told; seconds: number | undefined; chordStyle: ChordStyle; isNamed: boolean }) {
   const { headline, details, isGood } = wordsFor(told, seconds);
   const Icon = isGood ? CircleCheck : CircleDot;
   return (
@@ -29,10 +31,16 @@ function Verdict({ told, seconds, chordStyle, isNamed }: { told: Told; seconds: 
   );
 }
 
-function wordsFor({ verdict, byEar, milliseconds }: Told, seconds: number | undefined): { headline: string; details: string[]; isGood: boolean } {
+/** Other notes altogether: what they would be called when nobody had asked for a chord. */
+function calledAlone({ kind, soundsAs }: Verdict, played: Told['played']): string[] {
+  const names = kind === 'foreign' && soundsAs === null ? readingsOf(played).slice(0, 2).map(({ name }) => name) : [];
+  return names.length > 0 ? [`By itself this would be called ${names.join(' or ')}.`] : [];
+}
+
+function wordsFor({ verdict, played, byEar, milliseconds }: Told, seconds: number | undefined): { headline: string; details: string[]; isGood: boolean } {
   if (!verdict) return byEar === 'right' ? { headline: 'Right, heard by ear.', details: [], isGood: true } : { headline: 'Not right yet, heard by ear.', details: ['It can be tried again.'], isGood: false };
   const isLate = verdict.isRight && seconds !== undefined && milliseconds !== null && milliseconds > seconds * 1000;
   if (isLate) return { headline: 'Right notes, too late.', details: [`${secondsWords(milliseconds)} to place; the rung allows ${seconds} s. Try it again.`], isGood: false };
   const placed = verdict.isRight && milliseconds !== null ? [`${secondsWords(milliseconds)} to place.`] : [];
-  return { headline: verdict.headline, details: [...verdict.details, ...placed], isGood: verdict.isRight };
+  return { headline: verdict.headline, details: [...verdict.details, ...calledAlone(verdict, played), ...placed], isGood: verdict.isRight };
 }
