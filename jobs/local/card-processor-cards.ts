@@ -14,7 +14,7 @@ const ANSWERS: Record<string, CardAnswer> = { '4000000000000002': 'declined', '4
 const BRANDS: [RegExp, string][] = [[/^4/, 'visa'], [/^5[1-5]|^2[2-7]/, 'mastercard'], [/^3[47]/, 'amex']];
 
 /** The check digit of ISO/IEC 7812-1, annex B. */
-export function hasCheckDigit(number: string): boolean {
+function hasCheckDigit(number: string): boolean {
   const sum = [...number].reverse().reduce((total, digit, index) => {
     const value = Number(digit) * (index % 2 === 1 ? 2 : 1);
     return total + (value > 9 ? value - 9 : value);

@@ -8,7 +8,7 @@ export type Allocation = { itemId: string; kind: OpenItem['kind']; amountMinor: 
 export type AllocationResult = { allocations: Allocation[]; creditMinor: number };
 
 /** Fees last, then the oldest due date, then the lowest number. */
-export const byAllocationOrder = (a: OpenItem, b: OpenItem): number =>
+const byAllocationOrder = (a: OpenItem, b: OpenItem): number =>
   Number(a.kind === 'late_fee') - Number(b.kind === 'late_fee') || a.dueOn.localeCompare(b.dueOn) || a.numberNo - b.numberNo;
 
 /**

@@ -1,7 +1,7 @@
 import { sumOf } from '../money';
 
 /** Accounts of the school's books; `income…` codes come from the products. */
-export const ACCOUNTS = { receivable: 'receivable', deferredTuition: 'deferred_tuition', tax: 'tax_owed', bank: 'bank', cash: 'cash', customerCredit: 'customer_credit', earnedTuition: 'tuition_income' } as const;
+const ACCOUNTS = { receivable: 'receivable', deferredTuition: 'deferred_tuition', tax: 'tax_owed', bank: 'bank', cash: 'cash', customerCredit: 'customer_credit', earnedTuition: 'tuition_income' } as const;
 
 export type JournalLine = { accountCode: string; debitMinor: number; creditMinor: number };
 

@@ -13,7 +13,6 @@ export const previewRunSchema = z.object({
   instalments: z.coerce.number('Enter a number of instalments.').int().min(1, 'At least one.').max(12, 'At most twelve.').default(1),
   depositPercent: z.coerce.number().min(0).max(100).default(0),
 });
-export const runSchema = z.object({ runId: id });
 export const releaseRunSchema = z.object({ runId: id, controlTotalMinor: z.number().int() });
 export const holdFamilySchema = z.object({ runId: id, familyId: id, reason: words('Say why, so that a colleague understands it.') });
 export const unholdFamilySchema = z.object({ runId: id, familyId: id });

@@ -53,10 +53,10 @@ function fixedParts(wholeMinor: number, parts: readonly { payerId: string; amoun
   return left === 0 ? fixed.filter(({ amountMinor }) => amountMinor !== 0) : [...fixed, { payerId: remainderPayerId, amountMinor: left, shareBp: null }];
 }
 
-export const CHARGE_WORDS: Record<string, string> = {
+const CHARGE_WORDS: Record<string, string> = {
   tuition: 'Tuition', registration: 'Registration', trial: 'Trial lesson', book: 'Books', recital: 'Recital', rental: 'Rental', assessment: 'Assessment', fee: 'Fees', package: 'Package', workshop: 'Workshop',
 };
-export const chargeWords = (kind: string): string => CHARGE_WORDS[kind] ?? 'Other';
+const chargeWords = (kind: string): string => CHARGE_WORDS[kind] ?? 'Other';
 
 function sentenceOf(kind: string, wholeMinor: number, part: Omit<Part, 'payerId'>, words: MoneyWords): string {
   const name = chargeWords(kind);

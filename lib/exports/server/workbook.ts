@@ -11,7 +11,7 @@ const FORBIDDEN = /[[\]:*?/\\]/g;
 const NAME_LIMIT = 31;
 
 /** Sheet names are short, unique and without the signs that a spreadsheet refuses. */
-export function sheetNames(names: readonly string[]): string[] {
+function sheetNames(names: readonly string[]): string[] {
   const taken = new Set<string>();
   return names.map((name) => {
     const base = name.replace(FORBIDDEN, ' ').replace(/^'+|'+$/g, '').trim() || 'Sheet';

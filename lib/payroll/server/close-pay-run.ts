@@ -84,7 +84,7 @@ export const approvePayRun = (input: RunInput, context: Context): Promise<void> 
   });
 
 /** Same lines, same hash: what was paid can be proved later. */
-export function snapshotHash(lines: readonly StoredPayLine[]): string {
+function snapshotHash(lines: readonly StoredPayLine[]): string {
   const rows = lines.map(({ engagementId, lineKey, kind, localDate, minutes, rateMinor, shareBp, amountMinor }) => JSON.stringify([engagementId, lineKey, kind, localDate, minutes, rateMinor, shareBp, amountMinor]));
   return createHash('sha256').update(rows.sort().join('\n')).digest('hex');
 }
