@@ -55,7 +55,7 @@ const HANGING: Partial<Record<MadeTable, readonly Hanging[]>> = {
   room: [{ child: 'room_feature', column: 'room_id' }],
   occurrence: [{ child: 'hold', column: 'occurrence_id' }],
   family: [{ child: 'family_student', column: 'family_id', other: { column: 'student_id', table: 'person' } }],
-  person: [{ child: 'student_rung', column: 'student_id' }, { child: 'family_student', column: 'student_id', other: { column: 'family_id', table: 'family' } }],
+  person: [{ child: 'student_rung', column: 'student_id' }, { child: 'family_student', column: 'student_id' }],
 };
 /** General words of the school, which others may use by now: they go only when nothing points at them any more. */
 const SHARED: readonly MadeTable[] = ['term', 'subject', 'feature'];

@@ -7,7 +7,7 @@ import { findImportBatch, importRowsOf } from '@/db/imports';
 import { openSchool } from '@/lib/people/server/open-school';
 import { contextOf } from '../../../tests/support/context';
 import { freshDb } from '../../../tests/support/fresh-db';
-import { checkAgain, readUpload } from './check-import';
+import { checkAgain, readUpload, type Control } from './check-import';
 import { runImport } from './run-import';
 import { undoImport, undoObstacles } from './undo-import';
 import { uploadWorkbook } from './upload-workbook';
@@ -150,6 +150,34 @@ describe('bringing in a whole school', () => {
     const room = (await importRowsOf(school.db, batchId)).find(({ sheet }) => sheet === 'Rooms');
     expect(room).toMatchObject({ verdict: 'changed', reason: 'the school has another number of seats; it is left as it is' });
     expect(await school.db('room').select('personLimit')).toEqual([{ personLimit: 3 }]);
+  });
+
+  it('S40: of 120 rows, 3 blank, 5 listed twice and 4 faulty leave 108; put right they are 112; again nothing; undone none', async () => {
+    const school = await newSchool();
+    const student = (index: number) => [`Student ${String(index).padStart(3, '0')}`, 'Lomax', '13/02/2014', 2];
+    const good = Array.from({ length: 108 }, (_, index) => student(index + 1));
+    const wrong = [['Student 109', 'Lomax', '31/02/2014', 2], ['Student 110', 'Nobody', '', 2], ['Student 111', 'Nobody at all', '', 2], ['Student 112', 'Lomax', '', 'advanced']];
+    const right = [109, 110, 111, 112].map(student);
+    const sheet = (last: (string | number)[][]) => workbook({
+      Families: [['Family', 'Payer 1'], ['Lomax', 'Zora Lomax']],
+      Students: [['Student', 'Family', 'Born', 'Level'], ...good.slice(0, 50), [null], ...good.slice(50), ['', ' ', '', ''], ...good.slice(0, 5), [null], ...last],
+    });
+    const [first, fixed] = [await sheet(wrong), await sheet(right)];
+    const firstRun = await bring(school, first);
+    const control = JSON.parse((await findImportBatch(school.db, firstRun.batchId))?.controlJson ?? '') as Control;
+    const students = control.sheets.find(({ sheet: name }) => name === 'Students');
+    expect(students).toMatchObject({ rows: 117, good: 108, problems: 9, blanks: 3, byVerdict: { new: 108, duplicate: 5, faulty: 4, blank: 3 } });
+    expect(firstRun.imported.students).toBe(108);
+    const secondRun = await bring(school, fixed);
+    expect(secondRun.imported.students).toBe(4);
+    expect(await count(school.db, 'person', { isStudent: 1 })).toBe(112);
+    const thirdRun = await bring(school, fixed);
+    expect(thirdRun.imported.students).toBe(0);
+    expect((await importRowsOf(school.db, thirdRun.batchId)).filter(({ sheet: name, verdict }) => name === 'Students' && verdict === 'same')).toHaveLength(112);
+    await expect(undoImport({ batchId: firstRun.batchId }, school.context)).rejects.toThrow('cannot be undone');
+    for (const { batchId } of [thirdRun, secondRun, firstRun]) await undoImport({ batchId }, school.context);
+    expect(await count(school.db, 'person', { isStudent: 1 })).toBe(0);
+    expect(await count(school.db, 'family')).toBe(0);
   });
 
   it('refuses a row that meets a booking of the school, with the day', async () => {
