@@ -7,7 +7,7 @@ type HearingRow = { id: string; rung: string; outcome: 'passed' | 'not_yet' | nu
 type Dated = { rung: string; at: EpochSeconds; on: LocalDate };
 
 /** Everything from which a student's standing follows. */
-export async function rungFactsOf(db: Db, studentId: string): Promise<RungFact[]> {
+async function rungFactsOf(db: Db, studentId: string): Promise<RungFact[]> {
   const hearings: HearingRow[] = await db('hearing').where({ studentId }).whereNot('state', 'stopped')
     .select('id', 'rungId as rung', 'outcome', 'decidedAt', 'decidedOn', 'createdAt', 'startedOn');
   const credits: Dated[] = await db('rung_credit').where({ studentId }).select('rungId as rung', 'at', 'creditedOn as on');

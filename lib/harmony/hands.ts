@@ -1,8 +1,6 @@
 import { plural } from '../format';
 import type { KeyNumber } from './note';
 
-/** Semitones from thumb to little finger that a hand reaches without strain when nothing else is set. */
-export const USUAL_REACH_SEMITONES = 12;
 const FINGERS = 5;
 
 export type Hands = {

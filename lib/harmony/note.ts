@@ -38,8 +38,6 @@ export function inOctave(note: NoteName, octavesUp: number): NoteName {
   return `${pc}${(oct ?? 0) + octavesUp}`;
 }
 
-export const withoutOctave = (note: NoteName): NoteName => note.replace(/-?\d+$/, '');
-
 /** As it is printed: "E♭♭" for "Ebb", "F♯" for "F#". Single signs repeated, because many fonts lack the double ones. */
 export const printedNote = (note: NoteName): string => note.replace(/^([A-G])(b+|#+)?/, (_all, letter: string, signs: string | undefined) =>
   letter + (signs ?? '').replaceAll('b', '♭').replaceAll('#', '♯'));

@@ -19,7 +19,7 @@ export type ProgressFacts = {
 export type ProgressWords = { now: string; sound: string | null; next: string; when: string | null; count: string };
 
 /** "the full major ninth chord": the short name inside a sentence. */
-export const inSentence = (plainTitle: string): string => plainTitle.charAt(0).toLowerCase() + plainTitle.slice(1);
+const inSentence = (plainTitle: string): string => plainTitle.charAt(0).toLowerCase() + plainTitle.slice(1);
 
 /** How far a student is, in words that need no music theory. Dates come only from the student's own pace. */
 export function progressWords({ name, isReader, passed, rungCount, next, projection, today, locale }: ProgressFacts): ProgressWords {

@@ -3,7 +3,7 @@ export type Mark = { criterion: string; weightPercent: number; score: number };
 
 export type ScoreRule = { passHundredths: number; lowestScore: number };
 /** Passed from 3.00 on, and no criterion below 2. */
-export const USUAL_SCORE_RULE: ScoreRule = { passHundredths: 300, lowestScore: 2 };
+const USUAL_SCORE_RULE: ScoreRule = { passHundredths: 300, lowestScore: 2 };
 
 export type WeightedScore = { totalHundredths: number; isPassed: boolean; steps: string[] };
 
