@@ -10,3 +10,7 @@ export const say = (amountMinor: number, { currency, locale }: MoneyWords): stri
 
 /** "10 %" from 1000 basis points, "12.5 %" from 1250. */
 export const sayPercent = (basisPoints: number): string => `${basisPoints / 100} %`;
+
+/** "€" from EUR: what stands before the digits of a money field. */
+export const currencySign = (currency: string): string =>
+  new Intl.NumberFormat('en', { style: 'currency', currency, currencyDisplay: 'narrowSymbol' }).formatToParts(0).find(({ type }) => type === 'currency')?.value ?? currency;

@@ -3,6 +3,7 @@
 import { useState } from 'react';
 import { toast } from 'sonner';
 import type { FieldMessages } from '@/lib/errors';
+import { currencySign } from '@/lib/explained';
 import { deskPaymentSchema, DESK_METHODS, METHOD_WORDS } from '@/lib/tuition/schema';
 import type { LocalDate } from '@/lib/time';
 import { Button } from '../ui/button';
@@ -42,7 +43,7 @@ function TakePaymentForm({ payers, today, take, preview, requestKey, onClose }: 
     <form onSubmit={form.submit} noValidate className="flex flex-col gap-4">
       <SelectField label="Who pays" placeholder="Choose a payer" options={payers.map((payer) => ({ value: payer.payerId, label: `${payer.name} (${payer.familyName})` }))} error={errors.payerId?.message} {...form.register('payerId')} />
       <div className="grid gap-4 sm:grid-cols-2">
-        <MoneyField label="Amount" currencySign={signOf(currencyOf(payers, payerId))} error={errors.amount?.message} {...form.register('amount')} />
+        <MoneyField label="Amount" currencySign={currencySign(currencyOf(payers, payerId))} error={errors.amount?.message} {...form.register('amount')} />
         <SelectField label="Paid by" options={DESK_METHODS.map((method) => ({ value: method, label: METHOD_WORDS[method] }))} error={errors.method?.message} {...form.register('method')} />
       </div>
       <DateField label="Received on" max={today} error={errors.receivedOn?.message} {...form.register('receivedOn')} />
@@ -59,5 +60,3 @@ function TakePaymentForm({ payers, today, take, preview, requestKey, onClose }: 
 
 const onlyPayer = (payers: readonly PayerOption[]): string => (payers.length === 1 ? (payers[0]?.payerId ?? '') : '');
 const currencyOf = (payers: readonly PayerOption[], payerId: string): string => payers.find((payer) => payer.payerId === payerId)?.currency ?? payers[0]?.currency ?? 'EUR';
-const signOf = (currency: string): string =>
-  new Intl.NumberFormat('en', { style: 'currency', currency, currencyDisplay: 'narrowSymbol' }).formatToParts(0).find(({ type }) => type === 'currency')?.value ?? currency;

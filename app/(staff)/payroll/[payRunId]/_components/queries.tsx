@@ -6,6 +6,7 @@ import { FormError } from '@/components/ui/form-error';
 import { MoneyField, SelectField, TextArea } from '@/components/ui/inputs';
 import { Sheet } from '@/components/ui/sheet';
 import { useActionForm } from '@/components/ui/use-action-form';
+import { currencySign } from '@/lib/explained';
 import { formatDate } from '@/lib/format';
 import { answerSchema } from '@/lib/payroll/schema';
 import type { PayRunScreen, RunQuery } from '@/lib/payroll/server/pay-run-screen';
@@ -40,7 +41,7 @@ function AnswerForm({ query, currency, onClose }: { query: RunQuery; currency: s
   return (
     <form onSubmit={form.submit} noValidate className="mt-3 flex max-w-xl flex-col gap-3">
       <SelectField label="Your answer" value={isAccepted ? 'yes' : 'no'} onChange={(event) => pick(event.target.value === 'yes')} options={[{ value: 'yes', label: 'Accept: the difference becomes a line of its own' }, { value: 'no', label: 'Decline: the line stays as it is' }]} />
-      {isAccepted ? <MoneyField label="Difference" optional currencySign={currency} help="Less with a minus. Leave empty when the register puts it right." error={errors.amountChange?.message} {...form.register('amountChange')} /> : null}
+      {isAccepted ? <MoneyField label="Difference" optional currencySign={currencySign(currency)} help="Less with a minus. Leave empty when the register puts it right." error={errors.amountChange?.message} {...form.register('amountChange')} /> : null}
       <TextArea label="In words" rows={2} help="The teacher reads this." error={errors.answer?.message} {...form.register('answer')} />
       <FormError message={form.rootError} />
       <div className="flex gap-3"><Button type="submit" kind="primary" pending={isSubmitting}>{isAccepted ? 'Accept' : 'Decline'}</Button><Button onClick={onClose}>Leave it</Button></div>
