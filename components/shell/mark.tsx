@@ -1,5 +1,5 @@
 /** The mark: a ladder whose top rung is a notehead. */
-export function Mark({ size = 28 }: { size?: number }) {
+function Mark({ size = 28 }: { size?: number }) {
   return (
     <svg viewBox="0 0 28 28" width={size} height={size} aria-hidden focusable="false">
       <g fill="none" stroke="currentColor" strokeWidth="2" strokeLinecap="round">

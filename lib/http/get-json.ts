@@ -1,5 +1,5 @@
 /** An answer of the school that was not what was asked for, with the sentence it gave. */
-export class HttpError extends Error {
+class HttpError extends Error {
   constructor(readonly status: number, message: string) {
     super(message);
     this.name = 'HttpError';
@@ -13,10 +13,6 @@ export async function getJson<T>(path: string, query: Query = {}): Promise<T> {
   const given = Object.entries(query).filter((entry): entry is [string, string | number] => entry[1] !== undefined);
   const search = new URLSearchParams(given.map(([name, value]) => [name, String(value)]));
   return answered<T>(await fetch(given.length === 0 ? path : `${path}?${search}`, { headers: { Accept: 'application/json' } }));
-}
-
-export async function postJson<T>(path: string, body: unknown): Promise<T> {
-  return answered<T>(await fetch(path, { method: 'POST', headers: { 'Content-Type': 'application/json' }, body: JSON.stringify(body) }));
 }
 
 async function answered<T>(response: Response): Promise<T> {

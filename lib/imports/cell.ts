@@ -1,3 +1,4 @@
+import { tidyName } from '../people/names';
 import { clockOf, type LocalDate, type MinuteOfDay } from '../time';
 
 /** What one cell of a workbook holds, before anybody decides what it means. A formula counts as the value it was saved with. */
@@ -20,15 +21,12 @@ const NO_DAY = '1899-12-30';
 export function typedText(cell: Cell): string {
   switch (cell.kind) {
     case 'blank': return '';
-    case 'text': return tidy(cell.text);
+    case 'text': return tidyName(cell.text);
     case 'number': return cell.isPercent ? `${roundedOff(cell.value * 100)} %` : String(cell.value);
     case 'date': return cell.date === NO_DAY ? clockOf(cell.minute) : cell.date;
   }
 }
 
 export const isBlank = (cell: Cell): boolean => typedText(cell) === '';
-
-/** Single ordinary spaces, none at the ends: workbooks are full of spaces that do not break and of line ends. */
-const tidy = (text: string): string => text.normalize('NFC').replace(/[\s\u00a0\u202f\u200b]+/g, ' ').trim();
 
 const roundedOff = (value: number): number => Number(value.toFixed(6));

@@ -29,7 +29,7 @@ function collector() {
 
 const LENGTHS = [30, 45, 60] as const;
 
-export function readTeacher({ field, manner }: RowToRead): ReadRow {
+function readTeacher({ field, manner }: RowToRead): ReadRow {
   const { faults, take, say } = collector();
   const name = typedText(field('name'));
   if (name === '') say('name is missing');
@@ -44,7 +44,7 @@ export function readTeacher({ field, manner }: RowToRead): ReadRow {
   return { facts, faults, title: name };
 }
 
-export function readRoom({ field }: RowToRead): ReadRow {
+function readRoom({ field }: RowToRead): ReadRow {
   const { faults, take, say } = collector();
   const name = typedText(field('name'));
   if (name === '') say('name is missing');
@@ -54,7 +54,7 @@ export function readRoom({ field }: RowToRead): ReadRow {
 
 const WHOLE_BP = 10_000;
 
-export function readFamily({ field }: RowToRead): ReadRow {
+function readFamily({ field }: RowToRead): ReadRow {
   const { faults, take, say } = collector();
   const name = typedText(field('name'));
   if (name === '') say('family is missing');
@@ -71,7 +71,7 @@ export function readFamily({ field }: RowToRead): ReadRow {
   return { facts, faults, title: name };
 }
 
-export function readStudent({ field, manner, find }: RowToRead): ReadRow {
+function readStudent({ field, manner, find }: RowToRead): ReadRow {
   const { faults, take, say } = collector();
   const name = typedText(field('name'));
   if (name === '') say('student is missing');
@@ -84,7 +84,7 @@ export function readStudent({ field, manner, find }: RowToRead): ReadRow {
   return { facts, faults, title: name };
 }
 
-export function readEnrolment({ field, manner, find }: RowToRead): ReadRow {
+function readEnrolment({ field, manner, find }: RowToRead): ReadRow {
   const { faults, take } = collector();
   const named = (kind: SheetKind, column: string) => take(find(kind, typedText(field(column))));
   const [student, teacher, room] = [named('students', 'student'), named('teachers', 'teacher'), named('rooms', 'room')];

@@ -18,8 +18,7 @@ export type RowFacts = TeacherFacts | RoomFacts | FamilyFacts | StudentFacts | E
  * What becomes of a row. `new` will be brought in. `same` and `changed` are in the school already; a changed one is
  * named and left as the school has it. `duplicate` and `faulty` are left out, each with its reason. `blank` holds nothing.
  */
-export const VERDICTS = ['new', 'same', 'changed', 'duplicate', 'faulty', 'blank'] as const;
-export type Verdict = (typeof VERDICTS)[number];
+export type Verdict = 'new' | 'same' | 'changed' | 'duplicate' | 'faulty' | 'blank';
 export const VERDICT_WORDS: Record<Verdict, string> = { new: 'new', same: 'in the school', changed: 'changed', duplicate: 'listed twice', faulty: 'left out', blank: 'blank' };
 
 export type CheckedRow = {

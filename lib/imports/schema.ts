@@ -5,11 +5,11 @@ import { SHEET_KINDS } from './columns';
 const date = z.string().refine(isLocalDate, 'Enter a date.');
 const id = z.string().min(1).max(64);
 
-export const newTermSchema = z.object({ name: z.string().trim().min(1, 'Name the term, for example Autumn term.').max(60), startsOn: date, endsOn: date })
+const newTermSchema = z.object({ name: z.string().trim().min(1, 'Name the term, for example Autumn term.').max(60), startsOn: date, endsOn: date })
   .refine(({ startsOn, endsOn }) => startsOn < endsOn, { path: ['endsOn'], message: 'The last day comes after the first.' });
 
 /** What a workbook does not say and the person who brings it in decides. */
-export const importChoicesSchema = z.object({
+const importChoicesSchema = z.object({
   siteId: id,
   /** How the teachers of the workbook are engaged: a decision of the owner, never guessed. */
   engagementKind: z.enum(['employee', 'contractor']).nullable(),
@@ -20,7 +20,7 @@ export const importChoicesSchema = z.object({
 });
 export type ImportChoices = z.output<typeof importChoicesSchema>;
 
-export const sheetMappingSchema = z.object({
+const sheetMappingSchema = z.object({
   sheet: z.string().max(120), kind: z.enum(SHEET_KINDS).nullable(), headingRow: z.number().int().min(1).max(5000),
   places: z.record(z.string().max(40), z.number().int().min(0).max(100).nullable()), dateOrder: z.enum(['day_first', 'month_first']).nullable(),
 });

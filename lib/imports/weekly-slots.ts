@@ -3,7 +3,7 @@ import { closedDatesFor, teachingDates, type Closure, type Term } from '../calen
 import { overlaps, type LocalDate, type Span } from '../time';
 import type { EnrolmentFacts, Reference } from './rows';
 
-export const HOLDERS = ['room', 'teacher', 'student'] as const;
+const HOLDERS = ['room', 'teacher', 'student'] as const;
 export type Holder = (typeof HOLDERS)[number];
 
 /** Where and in which part of the term the lessons are laid. `from` is the first day on which a lesson may stand. */

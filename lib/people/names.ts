@@ -4,8 +4,8 @@ export function splitName(typed: string): { givenName: string; familyName: strin
   return { givenName, familyName: rest.join(' ') };
 }
 
-/** Single ordinary spaces, none at the ends; any script. */
-export const tidyName = (typed: string): string => typed.normalize('NFC').replace(/[\s\u00a0\u202f]+/g, ' ').trim();
+/** Single ordinary spaces, none at the ends; any script. Workbooks are full of spaces that do not break or have no width. */
+export const tidyName = (typed: string): string => typed.normalize('NFC').replace(/[\s\u00a0\u202f\u200b]+/g, ' ').trim();
 
 /** For comparing only: case, accents' encoding and spaces do not make a different name. */
 export const nameKey = (typed: string): string => tidyName(typed).toLocaleLowerCase('und').replace(/[’‘`]/g, "'");

@@ -49,7 +49,7 @@ export async function runImport({ batchId }: { batchId: string }, context: Conte
   });
 }
 
-export const inWords = (imported: Imported, { school }: Pick<Context, 'school'>): string =>
+const inWords = (imported: Imported, { school }: Pick<Context, 'school'>): string =>
   listOf(SHEET_KINDS.map((kind) => plural(imported[kind], KIND_WORDS[kind].one, KIND_WORDS[kind].many.toLowerCase())), school.locale);
 
 type Written = { made: Made[]; targets: ImportTarget[]; imported: Imported };

@@ -2,7 +2,7 @@ import 'server-only';
 import { AppError } from '@/lib/errors';
 
 /** No workbook of a school comes near these; a small file that unpacks to hundreds of megabytes does. */
-export const UPLOAD_LIMIT_BYTES = 5 * 1024 * 1024;
+const UPLOAD_LIMIT_BYTES = 5 * 1024 * 1024;
 const UNPACKED_LIMIT_BYTES = 60 * 1024 * 1024;
 const ENTRY_LIMIT = 300;
 
