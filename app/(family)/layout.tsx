@@ -19,7 +19,7 @@ export default async function FamilyLayout({ children }: { children: ReactNode }
       <Rail {...facts} hats={hats} />
       <div className="min-w-0">
         <PhoneTop aside={<AccountMenu personName={facts.personName} role={facts.role} hats={hats} compact />} />
-        <main id="content" className="mx-auto min-w-0 max-w-[760px] px-4 pb-24 md:pb-8">{children}</main>
+        <main id="content" tabIndex={-1} className="focus:outline-none mx-auto min-w-0 max-w-[760px] px-4 pb-24 md:pb-8">{children}</main>
       </div>
       <PhoneBottom role={facts.role} />
     </div>

@@ -19,7 +19,7 @@ export default async function StaffLayout({ children }: { children: ReactNode })
       <Rail {...facts} hats={hats} />
       <div className="min-w-0">
         <PhoneTop aside={<AccountMenu personName={facts.personName} role={facts.role} hats={hats} compact />} />
-        <main id="content" className="min-w-0 px-4 pb-24 md:px-7 md:pb-7">{children}</main>
+        <main id="content" tabIndex={-1} className="focus:outline-none min-w-0 px-4 pb-24 md:px-7 md:pb-7">{children}</main>
       </div>
       <PhoneBottom role={facts.role} />
     </div>

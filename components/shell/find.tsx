@@ -9,10 +9,12 @@ import { useEffect, useEffectEvent, useState } from 'react';
 import { getJson } from '@/lib/http/get-json';
 import type { Found } from '@/lib/people/found';
 import { KeyHint } from '../ui/key-hint';
+import { useReturnFocus } from '../ui/use-return-focus';
 
 /** Find: people, rooms, dates and invoices from anywhere, with `/` or Ctrl-K. */
 export function Find() {
   const router = useRouter();
+  const returnFocus = useReturnFocus();
   const [open, setOpen] = useState(false);
   const [text, setText] = useState('');
   useFindKeys(() => setOpen(true));
@@ -32,7 +34,7 @@ export function Find() {
       <Primitive.Root open={open} onOpenChange={setOpen}>
         <Primitive.Portal>
           <Primitive.Overlay className="appear fixed inset-0 z-40 bg-ink/40" />
-          <Primitive.Content aria-describedby={undefined} className="appear fixed left-1/2 top-[10dvh] z-50 w-[min(620px,94vw)] -translate-x-1/2 overflow-hidden rounded-md border border-rule bg-sheet shadow-xl">
+          <Primitive.Content {...returnFocus} aria-describedby={undefined} className="appear fixed left-1/2 top-[10dvh] z-50 w-[min(620px,94vw)] -translate-x-1/2 overflow-hidden rounded-md border border-rule bg-sheet shadow-xl">
             <Primitive.Title className="sr-only">Find</Primitive.Title>
             <Command shouldFilter={false} label="Find">
               <Command.Input value={text} onValueChange={setText} placeholder="A name, a room, a date like 17 Nov, an invoice number" className="w-full border-b border-rule bg-sheet px-4 py-4 text-lead outline-none placeholder:text-ink-3" />

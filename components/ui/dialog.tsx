@@ -3,6 +3,7 @@
 import { X } from 'lucide-react';
 import { Dialog as Primitive } from 'radix-ui';
 import type { ReactNode } from 'react';
+import { useReturnFocus } from './use-return-focus';
 
 type DialogProps = { open: boolean; onOpenChange: (open: boolean) => void; title: ReactNode; description?: ReactNode; children: ReactNode; wide?: boolean; side?: 'centre' | 'right' };
 
@@ -13,11 +14,12 @@ const PLACES = {
 
 /** Escape closes, focus stays inside and goes back to where it came from. `side="right"` makes it a drawer. */
 export function Dialog({ open, onOpenChange, title, description, children, wide = false, side = 'centre' }: DialogProps) {
+  const returnFocus = useReturnFocus();
   return (
     <Primitive.Root open={open} onOpenChange={onOpenChange}>
       <Primitive.Portal>
         <Primitive.Overlay className="appear fixed inset-0 z-40 bg-ink/40" />
-        <Primitive.Content {...(description === undefined ? { 'aria-describedby': undefined } : {})} className={`appear fixed z-50 flex flex-col overflow-hidden border border-rule bg-sheet shadow-xl ${wide ? 'w-[min(860px,100vw)]' : 'w-[min(520px,100vw)]'} ${PLACES[side]}`}>
+        <Primitive.Content {...returnFocus} {...(description === undefined ? { 'aria-describedby': undefined } : {})} className={`appear fixed z-50 flex flex-col overflow-hidden border border-rule bg-sheet shadow-xl ${wide ? 'w-[min(860px,100vw)]' : 'w-[min(520px,100vw)]'} ${PLACES[side]}`}>
           <div className="flex items-start justify-between gap-4 border-b border-rule px-5 py-4">
             <div>
               <Primitive.Title className="text-h2">{title}</Primitive.Title>

@@ -24,7 +24,7 @@ export function Dialogs() {
         <Button onClick={() => setOpen('confirm')}>Consequences</Button>
         <Button onClick={() => toast.success('Marked as here.', { action: undo })}>A message with Undo</Button>
         <Button onClick={() => toast.error('This did not reach the school. Press again.')}>A message of failure</Button>
-        <Menu label="More" trigger={<Button icon={<Ellipsis size={16} aria-hidden />}>Menu</Button>} items={[{ key: 'move', label: 'Move the lesson', onSelect: () => toast('Chosen: move') }, { key: 'cancel', label: 'Call it off', onSelect: () => toast('Chosen: call off'), disabled: true }]} />
+        <Menu trigger={<Button icon={<Ellipsis size={16} aria-hidden />}>Menu</Button>} items={[{ key: 'move', label: 'Move the lesson', onSelect: () => toast('Chosen: move') }, { key: 'cancel', label: 'Call it off', onSelect: () => toast('Chosen: call off'), disabled: true }]} />
       </div>
       <div className="mt-5">
         <Tabs label="An example" tabs={[{ key: 'one', label: 'Lessons', content: <p>Arrow keys move between the tabs.</p> }, { key: 'two', label: 'Bills', content: <p>Only the chosen one is shown.</p> }]} />
