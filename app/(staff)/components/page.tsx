@@ -16,10 +16,12 @@ export default async function ComponentsPage() {
     <>
       <PageHeader title="Components" sub="Every part of the screens in its states. For people who build them." actions={<Find />} />
       <div className="grid items-start gap-[18px] xl:grid-cols-2">
-        <ButtonsAndChips />
+        <div className="flex min-w-0 flex-col gap-[18px]">
+          <ButtonsAndChips />
+          <Dialogs />
+          <States />
+        </div>
         <Fields currencySign={currencySignOf(school)} />
-        <States />
-        <Dialogs />
         <div className="min-w-0 xl:col-span-2"><Tables /></div>
       </div>
     </>
