@@ -1,8 +1,9 @@
 'use server';
 
 import { revalidatePath } from 'next/cache';
+import * as z from 'zod';
 import { switchHatSchema } from '@/lib/people/schema';
-import { switchHat } from '@/lib/people/server/session';
+import { signOutEverywhere, switchHat } from '@/lib/people/server/session';
 import { action } from '@/lib/server/action';
 
 export const wearHat = action(switchHatSchema, async (input, context) => {
@@ -10,3 +11,5 @@ export const wearHat = action(switchHatSchema, async (input, context) => {
   revalidatePath('/', 'layout');
   return worn;
 });
+
+export const endAllSessions = action(z.object({}), signOutEverywhere);

@@ -52,7 +52,3 @@ export async function insertTrial(trx: Trx, trial: Omit<Trial, 'outcome' | 'sugg
 export const trialsOfEnquiry = (db: Db, enquiryId: string): Promise<(Trial & { localDate: LocalDate; startMin: number })[]> =>
   db('trial as t').join('occurrence as o', 'o.id', 't.occurrenceId').where('t.enquiryId', enquiryId).orderBy('o.startsAt', 'desc')
     .select('t.*', 'o.localDate', 'o.startMin');
-export const trialOfOccurrence = (db: Db, occurrenceId: string): Promise<Trial | undefined> => db<Trial>('trial').where({ occurrenceId }).first();
-export async function setTrialImpression(trx: Trx, id: string, impression: Pick<Trial, 'outcome' | 'suggestedLevel' | 'impression'>): Promise<void> {
-  await trx('trial').where({ id }).update(impression);
-}

@@ -40,9 +40,3 @@ export async function finishJob(db: Db, id: string, now: EpochSeconds, end: { st
   const outcome = end.state === 'done' ? { state: end.state, resultJson: JSON.stringify(end.result ?? null) } : { state: end.state, message: end.message };
   await db('job').where({ id }).update({ ...outcome, endedAt: now, leaseUntil: null, leaseOwner: null });
 }
-
-/** True the first time it is asked on a day: a daily job runs once a day, across restarts. */
-export async function claimDailyRun(db: Db, job: string, localDay: string, now: EpochSeconds): Promise<boolean> {
-  const rows: unknown[] = await db('job_run').insert({ job, scope: '', localDay, startedAt: now }).onConflict(['job', 'scope', 'local_day']).ignore().returning('job');
-  return rows.length > 0;
-}

@@ -8,10 +8,6 @@ export type Subject = { id: string; code: string; label: string };
 
 const toLessonType = (row: Row): LessonType => ({ ...row, isTaught: row.isTaught === 1 });
 
-export async function allLessonTypes(db: Db): Promise<LessonType[]> {
-  return (await db<Row>('lesson_type').select('id', 'code', 'label', 'seatsMin', 'seatsMax', 'isTaught')).map((row) => toLessonType(row as Row));
-}
-
 export async function lessonTypeByCode(db: Db, code: LessonTypeCode): Promise<LessonType> {
   const row = await db<Row>('lesson_type').where({ code }).first('id', 'code', 'label', 'seatsMin', 'seatsMax', 'isTaught');
   if (!row) throw new Error(`the school has no lesson type ${code}`);
@@ -19,14 +15,9 @@ export async function lessonTypeByCode(db: Db, code: LessonTypeCode): Promise<Le
 }
 
 export const allSubjects = (db: Db): Promise<Subject[]> => db<Subject>('subject').orderBy('label').select('id', 'code', 'label');
-export const findSubject = (db: Db, id: string): Promise<Subject | undefined> => db<Subject>('subject').where({ id }).first('id', 'code', 'label');
-
-/** Feature codes that a lesson of this type must find in its room. */
-export async function requiredFeatures(db: Db, lessonTypeId: string): Promise<string[]> {
-  const rows: { code: string }[] = await db('lesson_type_feature as t').join('feature as f', 'f.id', 't.featureId')
-    .where({ 't.lessonTypeId': lessonTypeId, 't.isRequired': 1 }).select('f.code');
-  return rows.map((row) => row.code);
-}
+/** What a lesson of this type must find in its room. */
+export const requiredFeatures = (db: Db, lessonTypeId: string): Promise<{ code: string; label: string }[]> =>
+  db('lesson_type_feature as t').join('feature as f', 'f.id', 't.featureId').where({ 't.lessonTypeId': lessonTypeId, 't.isRequired': 1 }).select('f.code', 'f.label');
 
 export async function insertLessonTypes(trx: Trx, types: LessonType[]): Promise<void> {
   await trx('lesson_type').insert(types.map((type) => ({ ...type, isTaught: type.isTaught ? 1 : 0 })));

@@ -41,13 +41,6 @@ const touching = (db: Db, span: Span) => joined(db).where('o.startsAt', '<', spa
 export const occurrencesFor = (db: Db, ability: AppAbility, span: Span): Promise<Occurrence[]> =>
   touching(db, span).where(allowedRows(ability, 'read', 'Occurrence', 'o'));
 
-/** For a rule: sees every booking, whoever asks, or two desks could book one room. */
-export const occurrencesTouching = (db: Db, span: Span): Promise<Occurrence[]> => touching(db, span);
-
-export const occurrencesOfTeacher = (db: Db, teacherId: string, from: LocalDate, until: LocalDate): Promise<Occurrence[]> =>
-  joined(db).whereBetween('o.localDate', [from, until]).whereIn('o.state', LIVE_STATES)
-    .andWhere((query) => query.where('o.plannedTeacherId', teacherId).orWhere('o.taughtById', teacherId)).orderBy('o.startsAt');
-
 export async function setOccurrenceState(trx: Trx, id: string, state: OccurrenceState): Promise<void> {
   await trx('occurrence').where({ id }).update({ state, rowVersion: trx.raw('row_version + 1') });
 }

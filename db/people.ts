@@ -25,10 +25,6 @@ export async function findPeople(db: Db, ids: readonly string[]): Promise<Person
   return rows.map(toPerson);
 }
 
-export async function markStudent(trx: Trx, id: string): Promise<void> {
-  await trx('person').where({ id }).update({ isStudent: 1 });
-}
-
 /** "Wren Adair"; the name a person is called by stands before the given one. */
 export const fullName = ({ givenName, calledName, familyName }: Pick<Person, 'givenName' | 'calledName' | 'familyName'>): string =>
   `${calledName ?? givenName} ${familyName}`.trim();
@@ -40,14 +36,6 @@ export async function insertContact(trx: Trx, contact: NewContact): Promise<void
 }
 
 export type Contact = { personId: string; kind: 'email' | 'phone'; value: string; isPrimary: number };
-export const contactsOf = (db: Db, personIds: readonly string[]): Promise<Contact[]> =>
-  db<Contact>('contact_point').whereIn('personId', [...personIds]).select('personId', 'kind', 'value', 'isPrimary').orderBy('isPrimary', 'desc');
-
-/** People reached by this e-mail address; two guardians may share one. */
-export const peopleByEmail = (db: Db, email: string): Promise<{ id: string; givenName: string; familyName: string }[]> =>
-  db('contact_point as c').join('person as p', 'p.id', 'c.personId').where('c.kind', 'email').where('c.value', email.toLowerCase())
-    .where('p.state', 'live').select('p.id', 'p.givenName', 'p.familyName');
-
 type NewRelationship = { id: string; childId: string; adultId: string; kind?: 'mother' | 'father' | 'guardian' | 'other' };
 export async function insertRelationship(trx: Trx, relationship: NewRelationship): Promise<void> {
   await trx('relationship').insert(relationship).onConflict(['child_id', 'adult_id']).ignore();

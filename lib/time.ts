@@ -27,16 +27,6 @@ function zonedAt(localDate: LocalDate, startMin: MinuteOfDay, zone: string): Tem
   return Temporal.PlainDate.from(localDate).toPlainDateTime(time).toZonedDateTime(zone, { disambiguation: 'compatible' });
 }
 
-/** Whether a wall-clock time exists once, never (spring gap) or twice (autumn overlap) in this zone. */
-export function occurrencesOfWallTime(localDate: LocalDate, startMin: MinuteOfDay, zone: string): 'once' | 'never' | 'twice' {
-  const time = Temporal.PlainTime.from({ hour: Math.floor(startMin / 60), minute: startMin % 60 });
-  const local = Temporal.PlainDate.from(localDate).toPlainDateTime(time);
-  const earlier = local.toZonedDateTime(zone, { disambiguation: 'earlier' });
-  const later = local.toZonedDateTime(zone, { disambiguation: 'later' });
-  if (earlier.epochMilliseconds === later.epochMilliseconds) return 'once';
-  return earlier.toPlainDateTime().equals(local) ? 'twice' : 'never';
-}
-
 const zonedOf = (at: EpochSeconds, zone: string) =>
   Temporal.Instant.fromEpochMilliseconds(at * 1000).toZonedDateTimeISO(zone);
 

@@ -16,6 +16,10 @@ const school = (name: string, base: number, flags = '') => ({
   },
 });
 
+const SCHOOLS = [{ name: 'demo', base: 3210, flags: '' }, { name: 'empty', base: 3220, flags: '--empty' }];
+/** `E2E_SCHOOLS=empty` starts only what a single test needs. */
+const WANTED = process.env.E2E_SCHOOLS?.split(',') ?? SCHOOLS.map(({ name }) => name);
+
 export default defineConfig({
   testDir: './e2e',
   outputDir: '../var/playwright',
@@ -35,5 +39,5 @@ export default defineConfig({
       args: ['--no-sandbox', '--disable-gpu', '--disable-background-networking', '--disable-component-update', '--disable-sync', '--no-first-run'],
     },
   },
-  webServer: [school('demo', 3210), school('empty', 3220, '--empty')],
+  webServer: SCHOOLS.filter(({ name }) => WANTED.includes(name)).map(({ name, base, flags }) => school(name, base, flags)),
 });

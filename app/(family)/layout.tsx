@@ -6,14 +6,14 @@ import { Rail } from '@/components/shell/rail';
 import { isFamilyRole } from '@/components/shell/sections';
 import { shellFacts } from '@/lib/people/server/shell-facts';
 import { requireContext } from '@/lib/server/context';
-import { wearHat } from '../actions';
+import { endAllSessions, wearHat } from '../actions';
 
 export default async function FamilyLayout({ children }: { children: ReactNode }) {
   const context = await requireContext();
   // Comfort, not a guard: every screen and operation checks for itself.
   if (!isFamilyRole(context.actor.role)) redirect('/today');
   const { roles, ...facts } = await shellFacts(context);
-  const hats = { roles, wear: wearHat };
+  const hats = { roles, wear: wearHat, endAll: endAllSessions };
   return (
     <div className="min-h-dvh md:grid md:grid-cols-[196px_minmax(0,1fr)]">
       <Rail {...facts} hats={hats} />

@@ -20,7 +20,7 @@ export type ClashFacts = {
 };
 
 export type Clash = {
-  rule: 'room' | 'teacher' | 'student' | 'turnover' | 'travel' | 'capacity' | 'opening_hours' | 'availability' | 'qualification' | 'background_check' | 'closure' | 'long_stretch';
+  rule: 'room' | 'teacher' | 'student' | 'turnover' | 'travel' | 'capacity' | 'feature' | 'opening_hours' | 'availability' | 'qualification' | 'background_check' | 'closure' | 'long_stretch';
   /** Hard rules refuse; soft ones warn and are logged when passed over. */
   isHard: boolean;
   /** By how many minutes (or seats) it falls short. */

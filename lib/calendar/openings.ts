@@ -131,5 +131,3 @@ const byScore = (a: Opening, b: Opening) => b.score - a.score || a.weekday - b.w
 /** "free on 13 of 15", or nothing to add when every date is free. */
 export const freeWords = ({ freeDates: free, takenDates }: Opening): string =>
   takenDates.length === 0 ? '' : `free on ${free.length} of ${free.length + takenDates.length}`;
-
-export const openingTime = ({ startMin, lengthMinutes }: Opening): string => formatTimeRange(startMin, lengthMinutes);

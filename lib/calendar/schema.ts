@@ -5,7 +5,6 @@ export const localDateSchema = z.string().refine(isLocalDate, 'Enter a date that
 const minuteSchema = z.number().int().min(0, 'Enter a time.').max(1439, 'Enter a time.');
 const idSchema = z.string().min(1, 'Choose one.').max(64);
 
-export const LESSON_LENGTHS = [30, 45, 60] as const;
 const lengthSchema = z.number().int().min(15, 'At least 15 minutes.').max(180, 'At most 3 hours.');
 
 export const windowSchema = z

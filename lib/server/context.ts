@@ -31,12 +31,6 @@ export async function requireContextTo(action: Action, name: SubjectName): Promi
   return context.ability.can(action, name) ? context : forbidden();
 }
 
-/** For pages about one record whose owner is known from the address, such as a child's progress. Null answers "not found". */
-export async function requireContextToRecord(action: Action, name: SubjectName, record: object): Promise<SignedIn | null> {
-  const context = await requireContext();
-  return may(context.ability, action, name, record) ? context : null;
-}
-
 declare module 'next-auth' {
   interface Session { userId?: string }
 }

@@ -21,20 +21,6 @@ export function readRoute<S extends z.ZodType, T>(schema: S, work: (query: z.out
   };
 }
 
-/** A JSON write from a table or the calendar; ends in the same operation as a form's action. */
-export function writeRoute<S extends z.ZodType, T>(schema: S, work: (input: z.output<S>, context: Context) => Promise<T>) {
-  return async (request: NextRequest, { params }: Params): Promise<Response> => {
-    const context = await currentContext();
-    if (!context) return refuse(401, 'Sign in first.');
-    return answer(async () => {
-      assertOwnOrigin(request.headers.get('origin'));
-      const input = schema.safeParse({ ...(await readBody(request)), ...(await params) });
-      if (!input.success) throw new AppError('invalid', input.error.issues[0]?.message ?? 'This was not understood.');
-      return work(input.data, context);
-    });
-  };
-}
-
 async function readBody(request: NextRequest): Promise<Record<string, unknown>> {
   const text = await request.text();
   if (text.length > BODY_LIMIT_BYTES) throw new AppError('invalid', 'This is too large to send.');

@@ -1,7 +1,7 @@
 import 'server-only';
 import type { Db } from '@/db/connection';
 import { bookingsTouching } from '@/db/bookings';
-import type { LessonType } from '@/db/lesson-types';
+import { requiredFeatures, type LessonType } from '@/db/lesson-types';
 import { findPeople, fullName, type Person } from '@/db/people';
 import { allSites, liveRooms, openingSpans, travelTimes, type Room } from '@/db/rooms';
 import { availabilityOn, clearedTeachers, qualificationsOn } from '@/db/teachers';
@@ -37,7 +37,7 @@ export async function clashesWith(db: Db, wish: BookingWish, ignoreOccurrenceId:
   const room = rooms.find(({ id }) => id === wish.roomId);
   const calendar = await calendarClashes(db, wish, { rooms, people, ignoreOccurrenceId });
   const seats = room ? capacityClash(wish.studentIds.length, room.personLimit, room.name) : [];
-  return [...calendar, ...seats, ...(await placeClashes(db, wish)), ...(await teacherClashes(db, wish, people))].sort((a, b) => Number(b.isHard) - Number(a.isHard));
+  return [...calendar, ...seats, ...(await featureClashes(db, wish, room)), ...(await placeClashes(db, wish)), ...(await teacherClashes(db, wish, people))].sort((a, b) => Number(b.isHard) - Number(a.isHard));
 }
 
 type Known = { rooms: Room[]; people: Person[]; ignoreOccurrenceId: string | null };
@@ -68,6 +68,13 @@ async function clashFacts(db: Db, zone: string, rooms: Room[], people: Person[])
 function nameIn(people: Person[], id: string): string {
   const person = people.find((candidate) => candidate.id === id);
   return person ? fullName(person) : 'This person';
+}
+
+/** What this kind of lesson must find in its room and does not. */
+async function featureClashes(db: Db, { lessonType }: BookingWish, room: Room | undefined): Promise<Clash[]> {
+  if (!room) return [];
+  const missing = (await requiredFeatures(db, lessonType.id)).filter(({ code }) => !room.features.includes(code));
+  return missing.map(({ label }) => ({ rule: 'feature', isHard: true, amount: 1, sentence: `${room.name} has no ${label}, which this kind of lesson needs.` }));
 }
 
 async function placeClashes(db: Db, wish: BookingWish): Promise<Clash[]> {

@@ -49,10 +49,3 @@ function summaryOf({ lessons, rooms, openToMin }: DayBoard): DeskToday['summary'
 const usedMinutes = (lessons: readonly BoardLesson[]): number =>
   lessons.filter(({ roomId }) => roomId !== null)
     .reduce((sum, { startMin, lengthMinutes }) => sum + Math.max(0, startMin + lengthMinutes - Math.max(startMin, BUSY_FROM_MIN)), 0);
-
-/** "Autumn term, week 9 of 13" for the foot of the rail; null between terms. */
-export async function termLine({ db, today }: Pick<Context, 'db' | 'today'>): Promise<string | null> {
-  const term = await termOn(db, today);
-  const week = term && weekOfTerm(term, today);
-  return term && week ? `${term.name}, week ${week.week} of ${week.of}` : null;
-}

@@ -13,7 +13,7 @@ import { WorkUnderWay } from './_components/work-under-way';
 export const metadata = { title: 'Import' };
 
 const SUBS: Record<ImportDetail['state'], string> = {
-  uploaded: 'Being read. Nothing has been brought in.', checked: 'Checked. Nothing has been brought in yet.', imported: 'Brought in.', undone: 'Undone. Nothing of it is left in the school.',
+  uploaded: 'Not read yet. Nothing has been brought in.', checked: 'Checked. Nothing has been brought in yet.', imported: 'Brought in.', undone: 'Undone. Nothing of it is left in the school.',
 };
 
 export default async function ImportBatchPage({ params }: { params: Promise<{ batchId: string }> }) {

@@ -9,7 +9,7 @@ import { formatInstant } from '@/lib/format';
 import type { ImportListRow } from '@/lib/imports/server/import-screen';
 
 const STATES: Record<ImportListRow['state'], { word: string; tone: ChipTone }> = {
-  uploaded: { word: 'being read', tone: 'neutral' }, checked: { word: 'checked', tone: 'wait' }, imported: { word: 'brought in', tone: 'ok' }, undone: { word: 'undone', tone: 'neutral' },
+  uploaded: { word: 'being read', tone: 'neutral' }, unreadable: { word: 'could not be read', tone: 'bad' }, checked: { word: 'checked', tone: 'wait' }, imported: { word: 'brought in', tone: 'ok' }, undone: { word: 'undone', tone: 'neutral' },
 };
 
 export function ImportList({ rows, locale, zone }: { rows: readonly ImportListRow[]; locale: string; zone: string }) {
