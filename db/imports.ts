@@ -17,9 +17,10 @@ export async function insertImportBatch(trx: Trx, batch: Pick<ImportBatch, 'id' 
   await trx('import_batch').insert(batch);
 }
 export const findImportBatch = (db: Db, id: string): Promise<ImportBatch | undefined> => batches(db).where({ id }).first();
-export const importBatches = (db: Db): Promise<(ImportBatch & { byName: string | null })[]> =>
-  db('import_batch as b').leftJoin('person as p', 'p.id', 'b.createdBy').orderBy('b.createdAt', 'desc').limit(100)
-    .select<(ImportBatch & { byName: string | null })[]>('b.*', db.raw("trim(p.given_name || ' ' || p.family_name) AS by_name"));
+type ListedBatch = ImportBatch & { byName: string | null; /** How the reading of an uploaded workbook stands. */ readState: string | null };
+export const importBatches = (db: Db): Promise<ListedBatch[]> =>
+  db('import_batch as b').leftJoin('person as p', 'p.id', 'b.createdBy').leftJoin('job as j', 'j.key', db.raw("'read_import:' || b.id")).orderBy('b.createdAt', 'desc').limit(100)
+    .select<ListedBatch[]>('b.*', 'j.state as readState', db.raw("trim(p.given_name || ' ' || p.family_name) AS by_name"));
 
 /** Moves a batch on from the state it is expected in; answers whether it was there. */
 export async function changeImportBatch(trx: Trx, id: string, from: readonly ImportState[], change: Partial<Omit<ImportBatch, 'id'>>): Promise<boolean> {

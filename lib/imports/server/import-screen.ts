@@ -18,13 +18,13 @@ import type { Control } from './check-import';
 import { checkOptionsFor, settingsOf, sheetsOf } from './import-plan';
 import { undoObstacles, type Obstacle } from './undo-import';
 
-export type ImportListRow = { batchId: string; fileName: string; state: ImportState; createdAt: number; byName: string; newRows: number; problems: number };
+export type ImportListRow = { batchId: string; fileName: string; state: ImportState | 'unreadable'; createdAt: number; byName: string; newRows: number; problems: number };
 
 export async function importList({ db, ability }: Context): Promise<ImportListRow[]> {
   assertCan(ability, 'read', 'Import', {});
-  return (await importBatches(db)).map(({ id, fileName, state, createdAt, byName, controlJson }) => {
+  return (await importBatches(db)).map(({ id, fileName, state, createdAt, byName, controlJson, readState }) => {
     const { sheets = [] } = JSON.parse(controlJson) as Partial<Control>;
-    return { batchId: id, fileName, state, createdAt, byName: byName ?? '', newRows: sheets.reduce((sum, { byVerdict }) => sum + byVerdict.new, 0), problems: sheets.reduce((sum, { problems }) => sum + problems, 0) };
+    return { batchId: id, fileName, state: state === 'uploaded' && readState === 'failed' ? 'unreadable' : state, createdAt, byName: byName ?? '', newRows: sheets.reduce((sum, { byVerdict }) => sum + byVerdict.new, 0), problems: sheets.reduce((sum, { problems }) => sum + problems, 0) };
   });
 }
 

@@ -2,7 +2,7 @@ import 'server-only';
 import ExcelJs, { type CellValue, type Cell as ExcelCell } from 'exceljs';
 import { AppError } from '@/lib/errors';
 import { BLANK, type Cell, type Sheet } from '../cell';
-import { assertSafeWorkbook } from './zip-directory';
+import { assertSafeWorkbook, assertUnpacksSafely } from './zip-directory';
 
 const MOST_ROWS = 5000;
 const MOST_COLUMNS = 60;
@@ -11,6 +11,7 @@ const LONGEST_TEXT = 2000;
 /** Reads a workbook into plain cells. Formulas count as the value they were saved with; they are never run. */
 export async function parseWorkbook(bytes: Buffer, fileName: string): Promise<Sheet[]> {
   assertSafeWorkbook(bytes, fileName);
+  assertUnpacksSafely(bytes);
   const book = new ExcelJs.Workbook();
   try {
     // The library's own type predates the generic Buffer of newer Node types.

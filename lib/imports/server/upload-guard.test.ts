@@ -1,10 +1,29 @@
 import { readFileSync } from 'node:fs';
 import path from 'node:path';
+import { deflateRawSync } from 'node:zlib';
 import ExcelJs from 'exceljs';
 import { describe, expect, it } from 'vitest';
 import { typedText } from '../cell';
 import { parseWorkbook } from './parse-workbook';
 import { assertSafeWorkbook } from './zip-directory';
+
+/** A zip of deflated parts with the sizes its table of contents is to claim. */
+function zipOf(parts: [name: string, packed: Buffer, claimedBytes: number][]): Buffer {
+  const [bodies, directory]: [Buffer[], Buffer[]] = [[], []];
+  let at = 0;
+  for (const [name, packed, claimedBytes] of parts) {
+    const local = Buffer.alloc(30);
+    local.writeUInt32LE(0x04034b50, 0); local.writeUInt16LE(8, 8); local.writeUInt32LE(packed.length, 18); local.writeUInt32LE(claimedBytes, 22); local.writeUInt16LE(name.length, 26);
+    const entry = Buffer.alloc(46);
+    entry.writeUInt32LE(0x02014b50, 0); entry.writeUInt16LE(8, 10); entry.writeUInt32LE(packed.length, 20); entry.writeUInt32LE(claimedBytes, 24); entry.writeUInt16LE(name.length, 28); entry.writeUInt32LE(at, 42);
+    bodies.push(local, Buffer.from(name), packed);
+    directory.push(entry, Buffer.from(name));
+    at += 30 + name.length + packed.length;
+  }
+  const end = Buffer.alloc(22);
+  end.writeUInt32LE(0x06054b50, 0); end.writeUInt16LE(parts.length, 8); end.writeUInt16LE(parts.length, 10); end.writeUInt32LE(Buffer.concat(directory).length, 12); end.writeUInt32LE(at, 16);
+  return Buffer.concat([...bodies, ...directory, end]);
+}
 
 const heron = () => readFileSync(path.resolve(import.meta.dirname, '../../../tests/support/data/heron-court.xlsx'));
 
@@ -23,6 +42,18 @@ describe('what may be uploaded', () => {
     const entry = bytes.indexOf(Buffer.from([0x50, 0x4b, 0x01, 0x02]));
     bytes.writeUInt32LE(200 * 1024 * 1024, entry + 24);
     expect(() => assertSafeWorkbook(bytes, 'bomb.xlsx')).toThrow('unpacks to more than is safe');
+  });
+
+  it('refuses a bomb whose table of contents lies about its size', async () => {
+    const packed = deflateRawSync(Buffer.alloc(61 * 1024 * 1024));
+    expect(packed.length).toBeLessThan(100_000);
+    const bytes = zipOf([['[Content_Types].xml', deflateRawSync(Buffer.from('<Types/>')), 8], ['xl/workbook.xml', packed, 1000]]);
+    expect(() => assertSafeWorkbook(bytes, 'bomb.xlsx')).not.toThrow();
+    await expect(parseWorkbook(bytes, 'bomb.xlsx')).rejects.toThrow('unpacks to more than is safe');
+  });
+
+  it('says so when the parts cannot be unpacked or read', async () => {
+    await expect(parseWorkbook(zipOf([['[Content_Types].xml', Buffer.from('not deflated'), 8], ['xl/workbook.xml', Buffer.from('x'), 1]]), 'a.xlsx')).rejects.toThrow('This is not a workbook.');
   });
 
   it('takes text that looks like a formula or a link as text', async () => {
