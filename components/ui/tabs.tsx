@@ -10,7 +10,7 @@ export function Tabs({ tabs, label, initial }: { tabs: readonly Tab[]; label: st
     <Primitive.Root defaultValue={initial ?? tabs[0]?.key}>
       <Primitive.List aria-label={label} className="flex gap-1 overflow-x-auto border-b border-rule-strong">
         {tabs.map(({ key, label: text }) => (
-          <Primitive.Trigger key={key} value={key} className="whitespace-nowrap border-b-2 border-transparent px-3 py-2 font-semibold text-ink-3 data-[state=active]:border-brass-fill data-[state=active]:text-ink tap">
+          <Primitive.Trigger key={key} value={key} className="shrink-0 whitespace-nowrap border-b-2 border-transparent px-3 py-2 font-semibold text-ink-3 data-[state=active]:border-brass-fill data-[state=active]:text-ink tap">
             {text}
           </Primitive.Trigger>
         ))}

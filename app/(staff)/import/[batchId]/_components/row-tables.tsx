@@ -14,12 +14,17 @@ import type { PreviewRow, PreviewSheet, SheetReading } from '@/lib/imports/serve
 
 const TONES: Record<Verdict, ChipTone> = { new: 'ok', same: 'neutral', changed: 'wait', duplicate: 'bad', faulty: 'bad', blank: 'neutral' };
 
+const asTyped = (cells: readonly string[]): string => cells.filter((cell) => cell !== '').join(' · ');
+
 const COLUMNS: Column<PreviewRow>[] = [
   { id: 'row', header: 'Row', align: 'right', value: ({ rowNo }) => rowNo },
-  { id: 'title', header: 'Who or what', isTitle: true, value: ({ title }) => title, cell: ({ title }) => (title === '' ? <span className="font-normal text-ink-3">no name</span> : title) },
+  {
+    id: 'title', header: 'Who or what, and the row as typed', isTitle: true, value: ({ title }) => title,
+    cell: ({ title, cells }) => <>{title === '' ? <span className="font-normal text-ink-3">no name</span> : title}<span className="block text-small font-normal text-ink-3">{asTyped(cells)}</span></>,
+  },
   { id: 'verdict', header: 'Verdict', value: ({ verdict }) => VERDICT_WORDS[verdict], cell: ({ verdict }) => <Chip tone={TONES[verdict]}>{VERDICT_WORDS[verdict]}</Chip> },
-  { id: 'reason', header: 'Why', value: ({ reason }) => reason, cell: ({ reason }) => (reason === '' ? '' : <span className="block md:min-w-[24ch]">{reason}</span>) },
-  { id: 'cells', header: 'In the sheet', value: ({ cells }) => cells.filter((cell) => cell !== '').join(' · '), cell: ({ cells }) => <span className="text-small text-ink-3">{cells.filter((cell) => cell !== '').join(' · ')}</span> },
+  { id: 'reason', header: 'Why', value: ({ reason }) => reason, cell: ({ reason }) => (reason === '' ? '' : <span className="block md:min-w-[22ch]">{reason}</span>) },
+  { id: 'cells', header: 'Cells', hidden: true, value: ({ cells }) => asTyped(cells) },
 ];
 
 /** A tab per sheet, every row with its verdict; the ones left out can be looked at alone. */
