@@ -1,4 +1,4 @@
-import type { Actor, Allow, Role, SubjectName } from './ability';
+import type { Actor, Allow, Role, SubjectName } from './types';
 
 type Grant = (actor: Actor, allow: Allow) => void;
 

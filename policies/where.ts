@@ -1,6 +1,6 @@
 import { rulesToCondition } from '@casl/ability/extra';
 import type { Knex } from 'knex';
-import type { Action, AppAbility, SubjectName } from './ability';
+import type { Action, AppAbility, SubjectName } from './types';
 
 type Where = (query: Knex.QueryBuilder) => void;
 /** Where a condition's field is found: by default the column of the same name under the given alias. */

@@ -1,7 +1,7 @@
 import type { Context } from '@/lib/server/context';
 import { localDateOf, type EpochSeconds } from '@/lib/time';
 import { abilityFor, type Actor } from '@/policies/ability';
-import type { House } from './demo-house';
+import type { House } from './demo-types';
 
 /** The owner at an earlier moment. */
 export const ownerAt = ({ owner, zone }: House, now: EpochSeconds): Context => ({ ...owner, now, today: localDateOf(now, zone) });

@@ -3,11 +3,11 @@ import { addDays, instantOf } from '@/lib/time';
 import type { Trx } from '../connection';
 import { addStudentToFamily, insertFamily, insertPayer, insertPercentSplit } from '../families';
 import { insertConsent, insertContact, insertPerson, insertRelationship } from '../people';
-import { giveAccount, type House } from './demo-house';
+import { giveAccount } from './demo-accounts';
 import { FAMILY_NAMES, GIVEN_NAMES } from './demo-people';
+import type { DemoStudent, House } from './demo-types';
 import { between, pick, type Random } from './random';
 
-export type DemoStudent = { id: string; familyId: string; name: string; isAdult: boolean; level: number; key?: 'ada' | 'ben' | 'theo' | 'abena' };
 type Base = Pick<House, 'random' | 'today' | 'zone' | 'legalEntityId' | 'passwordHash' | 'teachers'>;
 
 const FAMILY_COUNT = 110;

@@ -1,4 +1,4 @@
-import type { House } from './demo-house';
+import type { House } from './demo-types';
 import { layLadder } from './demo-ladder';
 import { layPayments, layPrices, layTuitionRun } from './demo-money';
 import { layPayRuns, layRates } from './demo-pay';

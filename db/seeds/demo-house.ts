@@ -1,28 +1,22 @@
 import type { Knex } from 'knex';
-import { contextOfUser, type SignedIn } from '@/lib/server/user-context';
+import { contextOfUser } from '@/lib/server/user-context';
 import { newId } from '@/lib/server/ids';
 import { hashPassword } from '@/lib/server/passwords';
 import { openSchool } from '@/lib/people/server/open-school';
-import { addDays, type EpochSeconds, type LocalDate } from '@/lib/time';
+import { addDays } from '@/lib/time';
 import type { Role } from '@/policies/ability';
-import { grantRole, insertAccount } from '../accounts';
 import type { Trx } from '../connection';
-import { insertContact, insertPerson } from '../people';
+import { insertPerson } from '../people';
 import { ensureFeature, insertOpeningSpans, insertRoom, insertSite, insertTravelTime } from '../rooms';
 import { insertAvailability, insertEngagement, insertQualification, insertStaffDocument } from '../teachers';
 import { insertClosure, insertTerm, type TermRow } from '../terms';
 import { transaction } from '../transaction';
+import { giveAccount } from './demo-accounts';
 import { demoClosures, type demoTerms } from './demo-calendar-plan';
-import { layFamilies, type DemoStudent } from './demo-families';
-import { DEMO_PASSWORD, DEMO_TEACHERS, type DemoTeacher } from './demo-people';
-import type { Random } from './random';
+import { layFamilies } from './demo-families';
+import { DEMO_PASSWORD, DEMO_TEACHERS } from './demo-people';
+import type { DemoRoom, House } from './demo-types';
 
-export type DemoRoom = { id: string; name: string; siteIndex: 0 | 1 };
-export type House = {
-  db: Knex; random: Random; now: EpochSeconds; today: LocalDate; zone: string; owner: SignedIn; subjectId: string; legalEntityId: string; siteIds: readonly [string, string];
-  rooms: DemoRoom[]; teachers: (DemoTeacher & { id: string; engagementId: string })[]; students: DemoStudent[]; terms: Record<'last' | 'current' | 'next', TermRow>;
-  passwordHash: string;
-};
 type Start = Pick<House, 'db' | 'random' | 'now' | 'today' | 'zone'> & { terms: ReturnType<typeof demoTerms> };
 
 const ROOMS = [
@@ -113,13 +107,4 @@ async function layTeachers(trx: Trx, house: Pick<House, 'today' | 'subjectId' | 
     laid.push({ ...teacher, days, id, engagementId });
   }
   return laid;
-}
-
-type DemoAccount = { personId: string; email: string; roles: Role[]; passwordHash: string; isLead?: boolean };
-
-export async function giveAccount(trx: Trx, { personId, email, roles, passwordHash, isLead = false }: DemoAccount): Promise<void> {
-  const userId = newId();
-  await insertContact(trx, { id: newId(), personId, kind: 'email', value: email });
-  await insertAccount(trx, { id: userId, personId, email, passwordHash, state: 'live' });
-  for (const role of roles) await grantRole(trx, { id: newId(), userId, role, isLead: isLead && role === 'teacher' });
 }

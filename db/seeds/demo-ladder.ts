@@ -12,7 +12,7 @@ import { insertPlacementCredits } from '../imports-write';
 import { liveEdition, needsOf, rungsOf, type Edition, type Rung } from '../ladders';
 import { transaction } from '../transaction';
 import { teacherAt, ownerAt } from './demo-context';
-import type { House } from './demo-house';
+import type { House } from './demo-types';
 import { demoSlots, type DemoSlot } from './demo-lessons';
 import { between } from './random';
 

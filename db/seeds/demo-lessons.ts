@@ -7,8 +7,9 @@ import { insertEnrolment, setEnrolmentSeries } from '../enrolments';
 import { lessonTypeByCode, type LessonType } from '../lesson-types';
 import { closuresBetween, type TermRow } from '../terms';
 import { transaction } from '../transaction';
-import { hoursOn, type House } from './demo-house';
-import type { DemoStudent } from './demo-families';
+import { hoursOn } from './demo-house';
+import type { House } from './demo-types';
+import type { DemoStudent } from './demo-types';
 import { between, pick, type Random } from './random';
 
 export type DemoSlot = { student: DemoStudent; teacherId: string; roomId: string; siteIndex: 0 | 1; weekday: number; startMin: number; lengthMinutes: number; enrolmentId: string | null };

@@ -10,7 +10,7 @@ import { transaction } from '../transaction';
 import { findTuitionRun } from '../tuition-runs';
 import type { TermRow } from '../terms';
 import { ownerAt } from './demo-context';
-import type { House } from './demo-house';
+import type { House } from './demo-types';
 import { between, pick } from './random';
 
 const LESSON_PRICES = [[30, 2800], [45, 4000], [60, 5200]] as const;

@@ -9,7 +9,7 @@ import { linesOfRun } from '../pay-lines';
 import { checksOf } from '../pay-runs';
 import { transaction } from '../transaction';
 import { ownerAt, teacherAt } from './demo-context';
-import type { House } from './demo-house';
+import type { House } from './demo-types';
 
 /** Cents per lesson at a rate factor of one hundred. */
 const LESSON_RATES = [[30, 1850], [45, 2700], [60, 3500]] as const;

@@ -2,7 +2,7 @@ import { newId } from '@/lib/server/ids';
 import { addDays } from '@/lib/time';
 import { addEnquiryEvent, insertEnquiry } from '../enquiries';
 import { transaction } from '../transaction';
-import type { House } from './demo-house';
+import type { House } from './demo-types';
 
 /** What waits for a person today: three enquiries in different states. */
 const ENQUIRIES = [
