@@ -8,8 +8,7 @@ import { lessonTypeByCode, type LessonType } from '../lesson-types';
 import { closuresBetween, type TermRow } from '../terms';
 import { transaction } from '../transaction';
 import { hoursOn } from './demo-house';
-import type { House } from './demo-types';
-import type { DemoStudent } from './demo-types';
+import type { DemoStudent, House } from './demo-types';
 import { between, pick, type Random } from './random';
 
 export type DemoSlot = { student: DemoStudent; teacherId: string; roomId: string; siteIndex: 0 | 1; weekday: number; startMin: number; lengthMinutes: number; enrolmentId: string | null };
