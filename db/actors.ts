@@ -25,17 +25,16 @@ async function taughtStudents(db: Db, teacherId: string, today: LocalDate): Prom
   const enrolled = db('enrolment').select('studentId').where({ teacherId }).whereIn('state', ['active', 'paused', 'notice_given']);
   const covered = db('seat as s').select('s.studentId').join('occurrence as o', 'o.id', 's.occurrenceId')
     .where('o.localDate', today).andWhere((query) => query.where('o.taughtById', teacherId).orWhere('o.plannedTeacherId', teacherId));
-  const rows: { studentId: string }[] = await enrolled.union([covered]);
+  const rows = (await enrolled.union([covered])) as { studentId: string }[];
   return rows.map((row) => row.studentId);
 }
 
 async function childrenOf(db: Db, adultId: string): Promise<string[]> {
-  const rows: { childId: string }[] = await db('relationship').select('childId')
-    .where({ adultId, hasLegalCare: 1, seesProgress: 1 });
+  const rows = (await db('relationship').select('childId').where({ adultId, hasLegalCare: 1, seesProgress: 1 })) as { childId: string }[];
   return rows.map((row) => row.childId);
 }
 
 async function payingFor(db: Db, personId: string): Promise<Pick<OwnRecords, 'payerIds' | 'familyIds'>> {
-  const rows: { id: string; familyId: string }[] = await db('payer').select('id', 'familyId').where({ personId });
+  const rows = (await db('payer').select('id', 'familyId').where({ personId })) as { id: string; familyId: string }[];
   return { payerIds: rows.map((row) => row.id), familyIds: rows.map((row) => row.familyId) };
 }

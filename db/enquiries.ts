@@ -21,12 +21,12 @@ export async function insertEnquiry(trx: Trx, { wishes, isAdult, ...enquiry }: O
 
 export async function findEnquiry(db: Db, id: string): Promise<Enquiry | undefined> {
   const row = await db<Row>('enquiry').where({ id }).first();
-  return row && toEnquiry(row as Row);
+  return row && toEnquiry(row);
 }
 
 export async function listEnquiries(db: Db, states: readonly EnquiryState[]): Promise<Enquiry[]> {
   const rows = await db<Row>('enquiry').whereIn('state', [...states]).orderBy('createdAt');
-  return (rows as Row[]).map(toEnquiry);
+  return (rows).map(toEnquiry);
 }
 
 type Change = Partial<Pick<Enquiry, 'state' | 'nextStepOn' | 'closedReason' | 'contactPersonId' | 'studentId'>>;

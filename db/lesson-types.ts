@@ -11,7 +11,7 @@ const toLessonType = (row: Row): LessonType => ({ ...row, isTaught: row.isTaught
 export async function lessonTypeByCode(db: Db, code: LessonTypeCode): Promise<LessonType> {
   const row = await db<Row>('lesson_type').where({ code }).first('id', 'code', 'label', 'seatsMin', 'seatsMax', 'isTaught');
   if (!row) throw new Error(`the school has no lesson type ${code}`);
-  return toLessonType(row as Row);
+  return toLessonType(row);
 }
 
 export const allSubjects = (db: Db): Promise<Subject[]> => db<Subject>('subject').orderBy('label').select('id', 'code', 'label');

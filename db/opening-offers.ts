@@ -14,14 +14,16 @@ export async function insertOffer(trx: Trx, { isWeekly, ...offer }: OpeningOffer
 }
 export async function findOffer(db: Db, id: string): Promise<OpeningOffer | undefined> {
   const row = await db<Row>('opening_offer').where({ id }).first();
-  return row && toOffer(row as Row);
+  return row && toOffer(row);
 }
 export async function setOfferState(trx: Trx, id: string, state: OpeningOffer['state']): Promise<void> {
   await trx('opening_offer').where({ id }).update({ state });
 }
 export async function offersOfEnquiry(db: Db, enquiryId: string): Promise<OpeningOffer[]> {
-  return ((await db<Row>('opening_offer').where({ enquiryId, state: 'held' }).orderBy('localDate')) as Row[]).map(toOffer);
+  const rows: Row[] = await db<Row>('opening_offer').where({ enquiryId, state: 'held' }).orderBy('localDate');
+  return rows.map(toOffer);
 }
 export async function lapsedOffers(db: Db, now: EpochSeconds): Promise<OpeningOffer[]> {
-  return ((await db<Row>('opening_offer').where({ state: 'held' }).where('heldUntil', '<=', now)) as Row[]).map(toOffer);
+  const rows: Row[] = await db<Row>('opening_offer').where({ state: 'held' }).where('heldUntil', '<=', now);
+  return rows.map(toOffer);
 }

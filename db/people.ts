@@ -17,7 +17,7 @@ export async function insertPerson(trx: Trx, { isStudent = false, ...person }: N
 
 export async function findPerson(db: Db, id: string): Promise<Person | undefined> {
   const row = await db<PersonRow>('person').where({ id }).first(...COLUMNS);
-  return row && toPerson(row as PersonRow);
+  return row && toPerson(row);
 }
 
 export async function findPeople(db: Db, ids: readonly string[]): Promise<Person[]> {

@@ -11,10 +11,10 @@ export const allSites = (db: Db): Promise<Site[]> => db<Site & { orderNo: number
 
 /** Live rooms with the codes of what stands in them, in the order of the room board. */
 export async function liveRooms(db: Db): Promise<Room[]> {
-  const rows: RoomRow[] = await db('room as r').join('site as s', 's.id', 'r.siteId').where('r.state', 'live')
+  const rows = (await db('room as r').join('site as s', 's.id', 'r.siteId').where('r.state', 'live')
     .select('r.id', 'r.siteId', 's.name as siteName', 's.zone', 'r.name', 'r.description', 'r.personLimit', 'r.turnoverMin',
       db.raw('(SELECT group_concat(f.code) FROM room_feature rf JOIN feature f ON f.id = rf.feature_id WHERE rf.room_id = r.id) AS features'))
-    .orderBy(['s.orderNo', 's.name', 'r.orderNo', 'r.name']);
+    .orderBy(['s.orderNo', 's.name', 'r.orderNo', 'r.name'])) as RoomRow[];
   return rows.map(({ features, ...room }) => ({ ...room, features: features?.split(',') ?? [] }));
 }
 

@@ -3,7 +3,7 @@ import { AppError, notFound } from '@/lib/errors';
 import { grantsOf } from './grants';
 import type { Action, Actor, AppAbility, SubjectName } from './types';
 
-export { ROLES, SUBJECTS } from './types';
+export { ROLES } from './types';
 export type { Action, Actor, Allow, AppAbility, Role, SubjectName } from './types';
 
 /** Nothing is allowed until a grant says so, and no grant takes anything away. */

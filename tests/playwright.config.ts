@@ -32,6 +32,8 @@ export default defineConfig({
   use: {
     baseURL: DEMO_URL,
     locale: 'en-IE',
+    actionTimeout: 20_000,
+    navigationTimeout: 30_000,
     timezoneId: 'Europe/Dublin',
     trace: 'retain-on-failure',
     launchOptions: {

@@ -26,7 +26,7 @@ export function RoomBoard({ board, siteId, now, onOpen }: RoomBoardProps) {
             </div>
           ))}
         </div>
-        <div ref={grid} onKeyDown={(event) => moveBetween(event, grid.current)} className="relative grid" style={{ ...columns, height: ((toMin - fromMin) * HOUR_PX) / 60 }}>
+        <div ref={grid} role="presentation" onKeyDown={(event) => moveBetween(event, grid.current)} className="relative grid" style={{ ...columns, height: ((toMin - fromMin) * HOUR_PX) / 60 }}>
           <div className="relative">
             {hours.map((hour) => <span key={hour} className="num absolute right-2 -translate-y-1/2 bg-sheet px-1 text-small text-ink-3 first:translate-y-0" style={{ top: offsetOf(hour * 60, fromMin) }}>{clockOf(hour * 60)}</span>)}
           </div>

@@ -57,12 +57,12 @@ async function hearSome(house: House, edition: Edition, rungs: Rung[], slot: Dem
     const teacher = house.teachers.find(({ id }) => id === slot.teacherId);
     // A rung played freely has no one voicing to play back.
     if (!lesson || !next || !teacher || teacher.levelTo < next.levelNo || next.spec.how === 'free') return;
-    await hear(house, slot, next, lesson, at);
+    await hear(house, slot, next, { lesson, at });
     passed.add(next.id);
   }
 }
 
-async function hear(house: House, { student, teacherId }: DemoSlot, rung: Rung, lesson: Taught, at: number): Promise<void> {
+async function hear(house: House, { student, teacherId }: DemoSlot, rung: Rung, { lesson, at }: { lesson: Taught; at: number }): Promise<void> {
   const context = teacherAt(house, teacherId, [student.id], lesson.startsAt + 20 * 60);
   const { hearingId } = await startHearing({ studentId: student.id, rungId: rung.id, occurrenceId: lesson.id, leadReason: '' }, context);
   const drawn = (await findHearing(house.db, hearingId))?.drawn ?? [];

@@ -1,4 +1,3 @@
-import { formatTimeRange } from '../format';
 import type { LocalDate, Span } from '../time';
 import { freeOn, type Busy, type DayClock } from './busy';
 

@@ -3,7 +3,7 @@ import { getServerSession } from 'next-auth';
 import { forbidden, redirect } from 'next/navigation';
 import { cache } from 'react';
 import { findSchool } from '@/db/school';
-import { may, type Action, type SubjectName } from '@/policies/ability';
+import type { Action, SubjectName } from '@/policies/ability';
 import { authOptions } from './auth';
 import { database } from './database';
 import { contextOfUser, type SignedIn } from './user-context';

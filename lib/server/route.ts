@@ -3,10 +3,8 @@ import { NextResponse, type NextRequest } from 'next/server';
 import type * as z from 'zod';
 import { AppError, type ErrorCode } from '@/lib/errors';
 import { currentContext, type Context } from './context';
-import { assertOwnOrigin } from './origin';
 
 const STATUS: Record<ErrorCode, number> = { not_found: 404, forbidden: 403, conflict: 409, invalid: 422, too_many: 429 };
-const BODY_LIMIT_BYTES = 1024 * 1024;
 
 type Params = { params: Promise<Record<string, string | string[] | undefined>> };
 
@@ -19,16 +17,6 @@ export function readRoute<S extends z.ZodType, T>(schema: S, work: (query: z.out
     if (!query.success) return refuse(400, 'The address lacks something this list needs.');
     return answer(() => work(query.data, context));
   };
-}
-
-async function readBody(request: NextRequest): Promise<Record<string, unknown>> {
-  const text = await request.text();
-  if (text.length > BODY_LIMIT_BYTES) throw new AppError('invalid', 'This is too large to send.');
-  try {
-    const body: unknown = text === '' ? {} : JSON.parse(text);
-    if (typeof body === 'object' && body !== null && !Array.isArray(body)) return body as Record<string, unknown>;
-  } catch { /* said below */ }
-  throw new AppError('invalid', 'This was not understood.');
 }
 
 async function answer<T>(work: () => Promise<T>): Promise<Response> {

@@ -48,5 +48,15 @@ export default tseslint.config(
     files: ['**/*.test.{ts,tsx}', 'tests/**', 'db/seeds/**', 'jobs/up.mjs'],
     rules: { 'max-lines': 'off', 'max-lines-per-function': 'off', complexity: 'off', '@typescript-eslint/no-unsafe-assignment': 'off', '@typescript-eslint/no-unsafe-member-access': 'off' },
   },
+  // Written before the limit was held to everywhere and still above it; nothing new joins this list.
+  {
+    files: [
+      'app/(public)/trial/_components/enquiry-form.tsx', 'app/(staff)/book/_components/book-form.tsx', 'app/(staff)/calendar/_components/calendar-screen.tsx',
+      'app/(staff)/enquiries/**/trial-sheet.tsx', 'app/(staff)/enrol/_components/enrol-screen.tsx', 'app/(staff)/openings/_components/opening-finder.tsx',
+      'app/(staff)/settings/_components/rules-tab.tsx', 'app/(staff)/today/_components/desk-today-screen.tsx', 'components/room-board/*.tsx',
+      'lib/calendar/server/{book-by-hand,calendar-week,enrol-facts,family-lessons}.ts',
+    ],
+    rules: { complexity: ['error', 27] },
+  },
   { files: ['**/*.{mjs,cjs}'], extends: [tseslint.configs.disableTypeChecked] },
 );

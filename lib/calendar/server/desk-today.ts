@@ -1,12 +1,10 @@
 import 'server-only';
 import { checksExpiringBefore, countFailedMails, guardianLines, unmarkedByTeacher } from '@/db/desk';
 import { listEnquiries } from '@/db/enquiries';
-import { termOn } from '@/db/terms';
 import type { Context } from '@/lib/server/context';
 import { addDays, daysBetween, type LocalDate } from '@/lib/time';
 import { may } from '@/policies/ability';
 import { needsPersonList, type NeedsPerson } from '../needs-person';
-import { weekOfTerm } from '../term';
 import { dayBoard, type BoardLesson, type DayBoard } from './day-board';
 
 export type DeskToday = {

@@ -102,7 +102,7 @@ describe('booking the trial', () => {
     expect(await context.db('hold').whereNotNull('openingOfferId')).toHaveLength(0);
     const mail: { attachmentsJson: string; subject: string } | undefined = await context.db('outbox').where({ topic: 'trial' }).first();
     const [file] = JSON.parse(mail?.attachmentsJson ?? '[]') as { content: string; filename: string }[];
-    const event = new ICAL.Component(ICAL.parse(file?.content ?? '')).getFirstSubcomponent('vevent');
+    const event = new ICAL.Component(ICAL.parse(file?.content ?? '') as string).getFirstSubcomponent('vevent');
     const row: { startsAt: number } | undefined = await context.db('occurrence').first('startsAt');
     expect((event?.getFirstPropertyValue('dtstart') as ICAL.Time).toUnixTime()).toBe(row?.startsAt);
     expect(mail?.subject).not.toContain('Wren');

@@ -1,6 +1,6 @@
 import NextAuth from 'next-auth';
 import { authOptions } from '@/lib/server/auth';
 
-const handler: (request: Request, context: unknown) => Promise<Response> = NextAuth(authOptions);
+const handler = NextAuth(authOptions) as (request: Request, context: unknown) => Promise<Response>;
 
 export { handler as GET, handler as POST };
