@@ -17,12 +17,12 @@ const DESK_MANAGES: SubjectName[] = [
 const grants: Record<Role, Grant> = {
   owner: (_actor, allow) => {
     allow('manage', OWNER_MANAGES);
-    allow('read', ['Hearing', 'Progress', 'Practice', 'Audit']);
+    allow('read', ['Hearing', 'HearingNote', 'Progress', 'Practice', 'Audit']);
   },
 
   desk: (actor, allow) => {
     allow('manage', DESK_MANAGES);
-    allow('read', ['Price', 'Term', 'Ladder', 'HealthNote', 'TuitionRun', 'Progress']);
+    allow('read', ['Price', 'Term', 'Ladder', 'HealthNote', 'TuitionRun']);
     allow('read', 'Audit', { actorId: actor.personId });
   },
 
@@ -34,7 +34,8 @@ const grants: Record<Role, Grant> = {
       allow('read', ['Occurrence', 'Seat'], mine);
       allow(['read', 'create', 'update'], 'Attendance', mine);
     }
-    allow('read', ['Progress', 'Hearing', 'Practice', 'HealthNote'], taught);
+    // The private note of a hearing and its keys are for those who teach: families read the result in plain words.
+    allow('read', ['Progress', 'Hearing', 'HearingNote', 'Practice', 'HealthNote'], taught);
     allow('read', 'Student', { id: { $in: [...actor.taughtStudentIds] } });
     allow(['read', 'create', 'update'], ['LessonNote', 'Report'], taught);
     allow('create', 'Practice', taught);
@@ -71,7 +72,7 @@ const grants: Record<Role, Grant> = {
 
 /** The lead keeps one standard: sees every student's ladder, agrees to skips and further attempts, looks after the rungs. */
 function grantLead(actor: Actor, allow: Allow): void {
-  allow('read', ['Progress', 'Hearing', 'Student', 'Occurrence', 'Seat', 'Practice']);
+  allow('read', ['Progress', 'Hearing', 'HearingNote', 'Student', 'Occurrence', 'Seat', 'Practice']);
   allow(['create', 'update'], 'Hearing', { assessorId: actor.personId });
   allow('approve', ['Hearing', 'Report']);
   allow('read', 'Report');

@@ -21,7 +21,7 @@ export type Action = 'read' | 'create' | 'update' | 'approve' | 'manage';
 
 export const SUBJECTS = [
   'Account', 'Attendance', 'Audit', 'BusyTime', 'Consent', 'Contact', 'Enquiry', 'Enrolment', 'Excuse', 'Family', 'HealthNote',
-  'Hearing', 'Import', 'Incident', 'InvoiceShare', 'Invoice', 'Job', 'Ladder', 'LessonNote', 'Occurrence', 'Payment', 'PayLine',
+  'Hearing', 'HearingNote', 'Import', 'Incident', 'InvoiceShare', 'Invoice', 'Job', 'Ladder', 'LessonNote', 'Occurrence', 'Payment', 'PayLine',
   'PayRun', 'Practice', 'Price', 'Progress', 'Rate', 'Recital', 'Refund', 'Report', 'Room', 'Scholarship', 'Seat', 'Settings',
   'Student', 'Term', 'TuitionRun',
 ] as const;

@@ -66,6 +66,7 @@ function judged(attendance: MarkedAttendance, { cancelDeadlineAt }: SeatWithLess
 export async function checkIn({ seatId, hasArrived }: { seatId: string; hasArrived: boolean }, context: Context): Promise<void> {
   const seat = await findSeat(context.db, seatId);
   if (!seat) throw notFound('lesson');
-  assertCan(context.ability, 'update', 'Seat', seat);
+  // A family may tell an absence, which changes the seat too; who has come in is seen at the school.
+  assertCan(context.ability, 'manage', 'Seat', seat);
   await transaction(context.db, (trx) => setArrived(trx, seat.id, hasArrived ? context.now : null));
 }

@@ -3,9 +3,10 @@ import { hearingsOf, hearingUnderWay, lastTries, proofsOf, type Hearing } from '
 import { lastLessonAim, lessonOnDay, openAgreement } from '@/db/ladder-standing';
 import type { Rung } from '@/db/ladders';
 import { qualificationsOn } from '@/db/teachers';
+import { notFound } from '@/lib/errors';
 import type { Context } from '@/lib/server/context';
 import { clockOf, type LocalDate } from '@/lib/time';
-import { assertCan, may } from '@/policies/ability';
+import { may } from '@/policies/ability';
 import type { ChordStyle } from '@/lib/harmony/chord-name';
 import type { DrawnKey } from '../asks';
 import type { HeardChord, Outcome, StartProblem } from '../hearing';
@@ -32,7 +33,7 @@ export type HearingScreen = {
 /** Everything the teacher has before them while hearing a student. Null while the school has no ladder. */
 export async function hearingScreen({ studentId, rungId }: { studentId: string; rungId?: string }, context: Context): Promise<HearingScreen | null> {
   const { db, ability, actor, today, school } = context;
-  assertCan(ability, 'read', 'Hearing', { studentId });
+  if (!may(ability, 'read', 'HearingNote', { studentId })) throw notFound('hearing');
   const read = await readStanding(studentId, context);
   if (!read) return null;
   const [ladder, hearings, lesson] = [toLadder(read), await hearingsOf(db, studentId), await lessonOnDay(db, studentId, today)];
