@@ -62,6 +62,8 @@ async function take(page, { name, size, open, until }) {
   await page.setViewportSize({ width, height: heights[0] });
   await open(page);
   await page.locator('main h1').first().waitFor({ state: 'attached' });
+  const title = await page.locator('main h1').first().innerText();
+  if (/^(This did not work|Nothing is here|This is not part of your role)/.test(title)) throw new Error(`${name} shows “${title}”`);
   if (until) await page.locator(until).first().waitFor();
   const file = path.join(FOLDER, `${name}.png`);
   for (const height of heights) {
