@@ -7,7 +7,7 @@ export type BilledEnrolment = {
   id: string; familyId: string; familyName: string; legalEntityId: string; currency: string; taxMode: 'inclusive' | 'exclusive';
   studentId: string; studentName: string; subjectLabel: string; lessonTypeId: string; lessonLabel: string; lengthMinutes: number;
   siteId: string; tuitionModel: TuitionModel; unitPriceMinor: number | null; startsOn: LocalDate; endsOn: LocalDate | null;
-  acceptedAt: EpochSeconds | null; createdAt: EpochSeconds; trialFeeMinor: number | null; trialCreditUntilOn: LocalDate | null; studentFirstStartsOn: LocalDate;
+  acceptedAt: EpochSeconds | null; createdAt: EpochSeconds; trialId: string | null; trialFeeMinor: number | null; trialCreditUntilOn: LocalDate | null; studentFirstStartsOn: LocalDate;
 };
 type Period = { from: LocalDate; to: LocalDate };
 
@@ -18,7 +18,7 @@ export const enrolmentsIn = (db: Db, { from, to }: Period): Promise<BilledEnrolm
     .where('f.state', 'live').whereIn('e.state', ['active', 'paused', 'notice_given', 'ended']).where('e.startsOn', '<=', to)
     .andWhere((query) => query.whereNull('e.endsOn').orWhere('e.endsOn', '>=', from))
     .select('e.id', 'e.familyId', 'f.name as familyName', 'f.legalEntityId', 'f.currency', 'n.taxMode', 'e.studentId', 'j.label as subjectLabel', 'e.lessonTypeId', 't.label as lessonLabel',
-      'e.lengthMinutes', 'e.siteId', 'e.tuitionModel', 'e.unitPriceMinor', 'e.startsOn', 'e.endsOn', 'e.acceptedAt', 'e.createdAt', 'x.feeMinor as trialFeeMinor', 'x.creditUntilOn as trialCreditUntilOn',
+      'e.lengthMinutes', 'e.siteId', 'e.tuitionModel', 'e.unitPriceMinor', 'e.startsOn', 'e.endsOn', 'e.acceptedAt', 'e.createdAt', 'e.trialId', 'x.feeMinor as trialFeeMinor', 'x.creditUntilOn as trialCreditUntilOn',
       db.raw("trim(coalesce(p.called_name, p.given_name) || ' ' || p.family_name) AS student_name"),
       db.raw('(SELECT min(o.starts_on) FROM enrolment o WHERE o.student_id = e.student_id) AS student_first_starts_on'))
     .orderBy(['f.name', 'f.id', 'p.bornOn', 'e.studentId', 'e.startsOn', 'e.rowid']);
@@ -37,12 +37,12 @@ export const billedTuition = (db: Db, { from, to }: Period): Promise<{ familyId:
   db('invoice_line as l').join('invoice as i', 'i.id', 'l.invoiceId').where('i.state', 'issued').where('l.chargeKind', 'tuition').where('l.grossMinor', '>=', 0)
     .whereNotNull('l.enrolmentId').whereNotNull('l.studentId').where('l.serviceFrom', '<=', to).where('l.serviceTo', '>=', from).select('i.familyId', 'l.studentId', 'l.enrolmentId', 'l.grossMinor');
 
-/** Students who have paid for registration, and enrolments whose trial fee has been credited. */
-export async function onceOnlyCharges(db: Db): Promise<{ registered: Set<string>; trialCredited: Set<string> }> {
-  const rows: { chargeKind: string; studentId: string | null; enrolmentId: string | null; kind: string | null }[] = await db('invoice_line as l').join('invoice as i', 'i.id', 'l.invoiceId')
-    .leftJoin('product as p', 'p.id', 'l.productId').where('i.state', 'issued').whereIn('p.kind', ['registration', 'trial']).select('l.studentId', 'l.enrolmentId', 'p.kind', 'l.chargeKind');
-  const of = (kind: string, id: 'studentId' | 'enrolmentId') => new Set(rows.filter((row) => row.kind === kind).map((row) => row[id]).filter((value): value is string => value !== null));
-  return { registered: of('registration', 'studentId'), trialCredited: of('trial', 'enrolmentId') };
+/** Students who have paid for registration, and trials whose fee has been credited, whichever of their enrolments took it. */
+export async function onceOnlyCharges(db: Db): Promise<{ registered: Set<string>; trialsCredited: Set<string> }> {
+  const issued = () => db('invoice_line as l').join('invoice as i', 'i.id', 'l.invoiceId').join('product as p', 'p.id', 'l.productId').where('i.state', 'issued');
+  const registered: { studentId: string }[] = await issued().where('p.kind', 'registration').whereNotNull('l.studentId').select('l.studentId');
+  const credited: { trialId: string }[] = await issued().join('enrolment as e', 'e.id', 'l.enrolmentId').where('p.kind', 'trial').whereNotNull('e.trialId').select('e.trialId');
+  return { registered: new Set(registered.map(({ studentId }) => studentId)), trialsCredited: new Set(credited.map(({ trialId }) => trialId)) };
 }
 
 type StoredLine = Omit<ComparedLine, 'discounts'> & { familyId: string; lineId: string; labels: string | null };

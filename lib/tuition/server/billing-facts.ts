@@ -24,7 +24,7 @@ export type BillingFacts = {
   products: Product[]; prices: PriceRow[]; taxRates: TaxRateRow[];
   discounts: DiscountRow[]; awards: Award[]; splits: FamilySplit[]; payers: Map<string, Payer[]>;
   billed: Map<string, { studentId: string; enrolmentId: string; grossMinor: number }[]>;
-  registered: Set<string>; trialCredited: Set<string>; before: Map<string, ComparedLine[]>;
+  registered: Set<string>; trialsCredited: Set<string>; before: Map<string, ComparedLine[]>;
 };
 
 export async function readBillingFacts(db: Db, period: BillingPeriod, plan: InstalmentPlan, manner: Manner): Promise<BillingFacts> {

@@ -22,7 +22,8 @@ export function familyBillOf(familyId: string, enrolments: readonly BilledEnrolm
   const before = facts.before.get(familyId) ?? null;
   const lastTotalMinor = before === null || before.length === 0 ? null : before.reduce((sum, { netMinor }) => sum + netMinor, 0);
   const problems: string[] = [];
-  const lines = [...enrolments.flatMap((enrolment) => tuitionLines(enrolment, { facts, words, problems })), ...registrationLines(enrolments, facts)];
+  const gathering: Gathering = { facts, words, problems, trialsCredited: new Set(facts.trialsCredited) };
+  const lines = [...enrolments.flatMap((enrolment) => tuitionLines(enrolment, gathering)), ...registrationLines(enrolments, facts)];
   if (lines.length === 0 && problems.length === 0) return null;
   const answer = problems.length > 0 ? problems[0]! : billOrProblem(lines, { familyId, first, facts, words });
   if (typeof answer === 'string') return { familyId, bill: null, problem: answer, difference: { kind: before ? 'changed' : 'new', sentence: '' }, lastTotalMinor };
@@ -50,12 +51,14 @@ function billOrProblem(lines: DraftLine[], { familyId, first, facts, words }: Fa
   }
 }
 
-type Gathering = { facts: BillingFacts; words: MoneyWords; problems: string[] };
+/** What is gathered while the enrolments of one family are gone through: problems in words, and trials whose fee has come off. */
+type Gathering = { facts: BillingFacts; words: MoneyWords; problems: string[]; trialsCredited: Set<string> };
 
 const isBilledBefore = ({ id, familyId, tuitionModel }: BilledEnrolment, { billed }: BillingFacts): boolean =>
   tuitionModel !== 'per_lesson' && (billed.get(familyId) ?? []).some(({ enrolmentId }) => enrolmentId === id);
 
-function tuitionLines(enrolment: BilledEnrolment, { facts, words, problems }: Gathering): DraftLine[] {
+function tuitionLines(enrolment: BilledEnrolment, gathering: Gathering): DraftLine[] {
+  const { facts, words, problems } = gathering;
   if (isBilledBefore(enrolment, facts)) return [];
   const seats = chargeableSeats(enrolment, facts.seats.get(enrolment.id) ?? []);
   const { product, unitMinor } = priceFor(enrolment, seats[0]?.localDate ?? facts.period.from, facts);
@@ -71,7 +74,7 @@ function tuitionLines(enrolment: BilledEnrolment, { facts, words, problems }: Ga
     serviceFrom: facts.period.from, serviceTo: facts.period.to,
     explain: charge.steps, isDiscountable: true, seatIds: enrolment.tuitionModel === 'per_lesson' ? seats.map(({ seatId }) => seatId) : [],
   };
-  return [line, ...trialLines(enrolment, line, facts, words)];
+  return [line, ...trialLines(enrolment, line, gathering)];
 }
 
 const productFields = (product: Product | undefined) =>
@@ -101,13 +104,14 @@ function enrolmentFacts(enrolment: BilledEnrolment, seats: readonly BilledSeat[]
   };
 }
 
-/** The fee of the trial comes off the first bill, once. It is shared as tuition is. */
-function trialLines(enrolment: BilledEnrolment, tuition: DraftLine, facts: BillingFacts, words: MoneyWords): DraftLine[] {
-  const { trialFeeMinor, trialCreditUntilOn } = enrolment;
-  if (!trialFeeMinor || !trialCreditUntilOn || facts.trialCredited.has(enrolment.id)) return [];
+/** The fee of the trial comes off the first bill, once per trial however many enrolments follow from it. It is shared as tuition is. */
+function trialLines(enrolment: BilledEnrolment, tuition: DraftLine, { facts, words, trialsCredited }: Gathering): DraftLine[] {
+  const { trialId, trialFeeMinor, trialCreditUntilOn } = enrolment;
+  if (!trialId || !trialFeeMinor || !trialCreditUntilOn || trialsCredited.has(trialId)) return [];
   const enrolledOn = localDateOf(enrolment.acceptedAt ?? enrolment.createdAt, facts.manner.zone);
   const credit = trialFeeCredit({ feeMinor: trialFeeMinor, creditUntilOn: trialCreditUntilOn }, enrolledOn, words);
   if (credit.value === 0) return [];
+  trialsCredited.add(trialId);
   const product = facts.products.find(({ kind }) => kind === 'trial');
   return [{
     ...tuition, productId: product?.id ?? null, text: `${enrolment.studentName}: trial fee credited`, quantity: 1, unitMinor: credit.value, grossMinor: credit.value,

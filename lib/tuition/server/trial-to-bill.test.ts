@@ -40,6 +40,12 @@ async function afterTheTrial(): Promise<Afterwards> {
   return { desk, enquiryId, studentId };
 }
 
+async function billTheAutumn(owner: Context) {
+  const { runId } = await previewTuitionRun({ kind: 'term', period: 'autumn', dueOn: '2026-10-30', instalments: 1, depositPercent: 0 }, owner);
+  const controlTotalMinor = (await findTuitionRun(owner.db, runId))?.controlTotalMinor ?? -1;
+  return { runId, ...(await releaseTuitionRun({ runId, controlTotalMinor }, owner)) };
+}
+
 /** Enrolled on that day for Mondays from 19 October, then billed with the autumn term. */
 async function firstBill(enrolledAt: number) {
   const { desk, enquiryId, studentId } = await afterTheTrial();
@@ -47,9 +53,7 @@ async function firstBill(enrolledAt: number) {
   const enrolled = await enrolStudent(enrolling, { ...desk, now: enrolledAt, today: localDateOf(enrolledAt, NEW_YORK.zone) });
   const { db } = desk;
   const owner = contextOf(db, 'owner', { personId: 'ruth', now: enrolledAt, school: NEW_YORK });
-  const { runId } = await previewTuitionRun({ kind: 'term', period: 'autumn', dueOn: '2026-10-30', instalments: 1, depositPercent: 0 }, owner);
-  const controlTotalMinor = (await findTuitionRun(db, runId))?.controlTotalMinor ?? -1;
-  const released = await releaseTuitionRun({ runId, controlTotalMinor }, owner);
+  const { runId, ...released } = await billTheAutumn(owner);
   const [item] = await itemsOfRun(db, runId);
   const lines: { text: string; quantity: number; unitMinor: number; netMinor: number }[] =
     await db('invoice_line').where({ invoiceId: item?.invoiceId ?? '' }).orderBy('lineNo').select('text', 'quantity', 'unitMinor', 'netMinor');
@@ -85,5 +89,26 @@ describe('S01 from the trial to the first bill', () => {
     const { db, owner } = await firstBill(at(10, 13));
     const { runId } = await previewTuitionRun({ kind: 'term', period: 'autumn', dueOn: '2026-10-30', instalments: 1, depositPercent: 0 }, owner);
     expect(await itemsOfRun(db, runId)).toEqual([]);
+  });
+
+  it('credits the fee once per trial: a second enrolment from the same enquiry pays its tuition in full, in the same bill or a later one', async () => {
+    const { desk, enquiryId, studentId } = await afterTheTrial();
+    const enrol = (localDate: string, startMin: number) => enrolStudent(
+      { ...PLACE, startMin, localDate, enquiryId, studentId, familyId: null, subjectId: 'keyboard', level: 1, hasAcceptedTerms: true as const },
+      { ...desk, now: at(10, 13), today: '2026-10-13' },
+    );
+    await enrol('2026-10-19', 960);
+    await enrol('2026-10-20', 960);
+    const owner = contextOf(desk.db, 'owner', { personId: 'ruth', now: at(10, 13), school: NEW_YORK });
+    const credits = async () => {
+      const rows: { netMinor: number }[] = await desk.db('invoice_line').where('text', 'like', '%trial fee%').select('netMinor');
+      return rows.map(({ netMinor }) => netMinor);
+    };
+    await billTheAutumn(owner);
+    expect(await credits()).toEqual([-2500]);
+    await enrol('2026-10-22', 960);
+    const { invoices } = await billTheAutumn(owner);
+    expect(invoices).toBe(1);
+    expect(await credits()).toEqual([-2500]);
   });
 });
