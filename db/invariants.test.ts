@@ -111,8 +111,11 @@ describe('8 make-up credits', () => {
     await refused(use(inTime, 31), 'credit_overused');
     await use(inTime, 30);
     await refused(use(alsoInTime, 1), 'credit_overused');
+    await refused(db('make_up_use').update({ minutes: 1 }), 'credit_use_fixed');
     await db('make_up_use').update({ reversedAt: 1 });
     await use(alsoInTime, 30);
+    await refused(db('make_up_use').where({ seatId: inTime }).update({ reversedAt: null }), 'credit_use_fixed');
+    await refused(db('make_up_use').delete(), 'credit_use_fixed');
   });
   it('keep each lengthening as it was written', async () => {
     await credit();
@@ -136,6 +139,9 @@ it('17 guests, performers and staff stay within the person limit of the hall', a
   await db('recital_reply').insert({ id: 'reply', recitalId: 'r', familyId: 'vale', seatsAllowed: 8 });
   await refused(db('recital_reply').update({ seatsGranted: 7 }), 'hall_full');
   await db('recital_reply').update({ seatsGranted: 6 });
+  const vale = await db<Record<string, unknown>>('family').where({ id: 'vale' }).first();
+  await db('family').insert({ ...vale, id: 'reyes', name: 'Reyes' });
+  await refused(db('recital_reply').insert({ id: 'late', recitalId: 'r', familyId: 'reyes', seatsAllowed: 1, seatsGranted: 1 }), 'hall_full');
 });
 
 describe('18 a thread about a student under age has a guardian in it, or nobody writes', () => {
@@ -190,11 +196,23 @@ describe('one rule at a time', () => {
     await db('setting_version').insert({ id: 'first', key: 'credit.valid_days', valueJson: '30', validFrom: '2026-01-01', validTo: '2026-09-01' });
     await refused(db(table).insert(row), code);
     await db(table).insert({ ...row, ...apart });
+    await refused(db(table).where({ id: row.id }).update(Object.fromEntries(Object.keys(apart).map((key) => [key, (row as Record<string, unknown>)[key] ?? null]))), code);
   });
   it('a teacher’s rate for one kind of work', async () => {
     await lanternPay(db);
     const rate = await db<Record<string, unknown>>('pay_rate').where({ lengthMinutes: 30, engagementId: 'engagement-mara' }).first();
     await refused(db('pay_rate').insert({ ...rate, id: 'again', validFrom: '2026-08-01' }), 'pay_rate_overlap');
+    await db('pay_rate').insert({ ...rate, id: 'hour', lengthMinutes: 75 });
+    await refused(db('pay_rate').where({ id: 'hour' }).update({ lengthMinutes: 30 }), 'pay_rate_overlap');
+  });
+  it('how one class of goods is taxed, and how a family shares one kind of charge', async () => {
+    const tax = { legalEntityId: 'lantern', taxClass: 'books', treatment: 'zero', rateBp: 0 };
+    await db('tax_rate').insert([{ ...tax, id: 'until', validFrom: '2026-01-01', validTo: '2026-07-01' }, { ...tax, id: 'from', validFrom: '2026-07-01' }]);
+    await refused(db('tax_rate').where({ id: 'until' }).update({ validTo: '2026-07-02' }), 'tax_rate_overlap');
+    const split = { familyId: 'vale', chargeKind: 'material', method: 'percent', partsJson: JSON.stringify([{ payerId: 'payer-noor', bp: 10_000 }]) };
+    await db('split_rule').insert([{ ...split, id: 'until', validFrom: '2026-01-01', validTo: '2026-07-01' }, { ...split, id: 'from', validFrom: '2026-07-01' }]);
+    await refused(db('split_rule').where({ id: 'until' }).update({ validTo: null }), 'split_overlap');
+    await db('split_rule').where({ id: 'until' }).update({ validTo: '2026-06-01' });
   });
   it('a fund gives no more than it has', async () => {
     await scholarship(db, 'ada', 5000);
