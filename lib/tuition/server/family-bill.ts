@@ -105,17 +105,22 @@ function enrolmentFacts(enrolment: BilledEnrolment, seats: readonly BilledSeat[]
 }
 
 /** The fee of the trial comes off the first bill, once per trial however many enrolments follow from it. It is shared as tuition is. */
-function trialLines(enrolment: BilledEnrolment, tuition: DraftLine, { facts, words, trialsCredited }: Gathering): DraftLine[] {
-  const { trialId, trialFeeMinor, trialCreditUntilOn } = enrolment;
-  if (!trialId || !trialFeeMinor || !trialCreditUntilOn || trialsCredited.has(trialId)) return [];
+function trialLines(enrolment: BilledEnrolment, tuition: DraftLine, { facts, words, problems, trialsCredited }: Gathering): DraftLine[] {
+  const { trialId, trialFeeMinor: feeMinor, trialCreditUntilOn: creditUntilOn } = enrolment;
+  if (!trialId || feeMinor === null || creditUntilOn === null || trialsCredited.has(trialId)) return [];
   const enrolledOn = localDateOf(enrolment.acceptedAt ?? enrolment.createdAt, facts.manner.zone);
-  const credit = trialFeeCredit({ feeMinor: trialFeeMinor, creditUntilOn: trialCreditUntilOn }, enrolledOn, words);
+  const credit = trialFeeCredit({ feeMinor, creditUntilOn }, enrolledOn, words);
   if (credit.value === 0) return [];
   trialsCredited.add(trialId);
   const product = facts.products.find(({ kind }) => kind === 'trial');
+  // The product is how a later run knows that the fee has come off: without it, the fee would come off again and again.
+  if (!product) {
+    problems.push('The price list has no trial lesson, so its fee cannot be credited. Add it before billing.');
+    return [];
+  }
   return [{
-    ...tuition, productId: product?.id ?? null, text: `${enrolment.studentName}: trial fee credited`, quantity: 1, unitMinor: credit.value, grossMinor: credit.value,
-    accountCode: product?.accountCode ?? tuition.accountCode, explain: credit.steps, isDiscountable: false, seatIds: [],
+    ...tuition, productId: product.id, accountCode: product.accountCode, text: `${enrolment.studentName}: trial fee credited`,
+    quantity: 1, unitMinor: credit.value, grossMinor: credit.value, explain: credit.steps, isDiscountable: false, seatIds: [],
   }];
 }
 

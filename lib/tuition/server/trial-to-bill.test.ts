@@ -43,7 +43,7 @@ async function afterTheTrial(): Promise<Afterwards> {
 async function billTheAutumn(owner: Context) {
   const { runId } = await previewTuitionRun({ kind: 'term', period: 'autumn', dueOn: '2026-10-30', instalments: 1, depositPercent: 0 }, owner);
   const controlTotalMinor = (await findTuitionRun(owner.db, runId))?.controlTotalMinor ?? -1;
-  return { runId, ...(await releaseTuitionRun({ runId, controlTotalMinor }, owner)) };
+  return releaseTuitionRun({ runId, controlTotalMinor }, owner);
 }
 
 /** Enrolled on that day for Mondays from 19 October, then billed with the autumn term. */
