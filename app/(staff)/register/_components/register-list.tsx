@@ -12,7 +12,7 @@ export function RegisterList({ rows, locale, showsTeacher }: { rows: readonly Re
   const router = useRouter();
   if (rows.length === 0) return <Sheet flush><EmptyState title="Nothing to mark">Lessons that end without a mark appear here the next day.</EmptyState></Sheet>;
   return (
-    <ul className="sheet">
+    <ul className="sheet" aria-label="Lessons without a mark">
       {rows.map((row) => (
         <li key={row.seatId} className="flex flex-wrap items-center justify-between gap-3 border-b border-rule px-4 py-3 last:border-b-0">
           <div>
