@@ -14,6 +14,7 @@ export function TableHead<Row>({ columns, sorting, onSort }: TableHeadProps<Row>
         {columns.map(({ id, header, align }) => {
           const isSorted = current?.id === id;
           const direction = isSorted ? (current.desc ? 'descending' : 'ascending') : undefined;
+          if (header === '') return <th key={id} scope="col"><span className="sr-only">Actions</span></th>;
           return (
             <th key={id} scope="col" aria-sort={direction ?? 'none'} className={`px-3 py-[9px] text-[12.5px] font-semibold text-ink-3 ${align === 'right' ? 'text-right' : 'text-left'}`}>
               <button type="button" onClick={() => onSort([{ id, desc: isSorted && !current.desc }])} className={`inline-flex items-center gap-1 hover:text-ink ${isSorted ? 'text-ink' : ''}`}>

@@ -2,7 +2,8 @@
 /**
  * Takes the pictures of the README's tour from a demo school that is open already:
  *   npm run pictures -- http://localhost:3000
- * Each picture is one screen of a demo sign-in, at the width of a desk or of a phone. Nothing is written to the school.
+ * Each picture is one screen of a demo sign-in, at the width of a desk or of a phone. One hearing is begun and
+ * stopped, which counts as no attempt; nothing else is written to the school.
  */
 import { mkdirSync, statSync } from 'node:fs';
 import path from 'node:path';
@@ -35,12 +36,20 @@ const at = (address) => (page) => page.goto(address, { waitUntil: 'networkidle' 
 async function hearing(page) {
   await firstOf('/students')(page);
   await page.goto(`/hearings/${new URL(page.url()).pathname.split('/').at(-1)}`, { waitUntil: 'networkidle' });
+  await page.getByRole('button', { name: 'Begin the hearing' }).click();
+  await page.locator('rect[data-key]').first().waitFor();
+}
+async function stopHearing(page) {
+  await page.getByRole('button', { name: /^Stop, no attempt/ }).click();
+  await page.getByLabel('Why it stops').fill('Begun for a picture');
+  await page.getByRole('button', { name: 'Stop the hearing' }).click();
+  await page.getByRole('dialog').waitFor({ state: 'hidden' });
 }
 
 const TOUR = [
   { name: 'desk-today', who: 'desk', size: 'desk', open: at('/today') },
   { name: 'calendar', who: 'desk', size: 'desk', open: at('/calendar'), until: '.fc-timegrid, [class*="fc-"]' },
-  { name: 'hearing', who: 'teacher', size: 'desk', open: hearing },
+  { name: 'hearing', who: 'teacher', size: 'desk', open: hearing, afterwards: stopHearing },
   { name: 'pay-run', who: 'owner', size: 'desk', open: firstOf('/payroll') },
   { name: 'tuition-run', who: 'owner', size: 'desk', open: firstOf('/tuition', ['/tuition/invoices', '/tuition/payments']) },
   { name: 'teacher-today', who: 'teacher', size: 'phone', open: at('/today') },
@@ -83,7 +92,10 @@ try {
     const context = await browser.newContext({ baseURL: BASE, locale: 'en-IE', timezoneId: 'Europe/Dublin', reducedMotion: 'reduce' });
     const page = await context.newPage();
     await signIn(page, PEOPLE[who]);
-    for (const picture of TOUR.filter((one) => one.who === who)) await take(page, picture);
+    for (const picture of TOUR.filter((one) => one.who === who)) {
+      await take(page, picture);
+      await picture.afterwards?.(page);
+    }
     await context.close();
   }
 } finally {

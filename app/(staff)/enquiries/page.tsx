@@ -16,7 +16,7 @@ export default async function EnquiriesPage() {
     <>
       <PageHeader title="Enquiries" sub={`${plural(open.length, 'open enquiry', 'open enquiries')}, oldest first.`} actions={<><Find /><ButtonLink href="/enquiries/new" kind="primary">New enquiry</ButtonLink></>} />
       <EnquiryList open={open} ended={ended} locale={context.school.locale} zone={context.school.zone} now={context.now} today={context.today} />
-      <p className="mt-4 text-small text-ink-3">Strangers ask through the page <Link href="/trial" className="text-petrol">Ask for a trial lesson</Link>; put its address on the school’s own site.</p>
+      <p className="mt-4 text-small text-ink-3">Strangers ask through the page <Link href="/trial" className="text-petrol underline">Ask for a trial lesson</Link>; put its address on the school’s own site.</p>
     </>
   );
 }

@@ -17,7 +17,7 @@ export default async function ChoosePasswordPage({ params }: { params: Promise<{
           <ChoosePasswordForm token={token} />
         </>
       ) : (
-        <p className="mt-3">It has been used or has run out. <Link href="/forgot-password" className="text-petrol">Ask for a new one</Link>.</p>
+        <p className="mt-3">It has been used or has run out. <Link href="/forgot-password" className="underline text-petrol">Ask for a new one</Link>.</p>
       )}
     </div>
   );

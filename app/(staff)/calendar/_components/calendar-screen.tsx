@@ -55,7 +55,7 @@ export function CalendarScreen({ choices, first, date, today, zone, locale, week
         buttons={{ today: { text: 'Today' }, timeGridWeek: { text: 'Week' }, dayGridMonth: { text: 'Month' }, listWeek: { text: 'List' }, timeGridDay: { text: 'Day' } }}
         slotMinTime={hours.from} slotMaxTime={hours.to} slotDuration="00:15:00" slotHeaderInterval="01:00" nowIndicator allDayText="all day" height="auto" tableHeaderSticky={false}
         eventTimeFormat={{ hour: '2-digit', minute: '2-digit', hour12: false }} slotHeaderFormat={{ hour: '2-digit', minute: '2-digit', hour12: false }}
-        noEventsText="Nothing in this week." events={events}
+        noEventsText="Nothing in this week." events={events} allDaySlot={events.some(({ allDay }) => allDay)}
         eventClass={({ event }) => CLASSES[(event.extendedProps.entry as CalendarEntry).colour] ?? 'rw-petrol'}
         datesSet={({ startStr, endStr }) => setSpan({ from: instantOf(startStr.slice(0, 10), 0, zone), until: instantOf(endStr.slice(0, 10), 0, zone) })}
         eventClick={({ event }) => { const entry = event.extendedProps.entry as CalendarEntry; if (entry.kind === 'lesson' || entry.kind === 'event') router.push(`/today?date=${entry.localDate}`); }}

@@ -13,7 +13,7 @@ export function PayShareChart({ rows }: { rows: readonly Row[] }) {
       <div className="flex items-stretch gap-2">
         <div className="min-w-0 flex-1">
           <ResponsiveContainer width="100%" height={rows.length * ROW_HEIGHT} initialDimension={{ width: 200, height: rows.length * ROW_HEIGHT }}>
-            <BarChart data={[...rows]} layout="vertical" margin={{ top: 0, right: 0, bottom: 0, left: 0 }} barGap={1} barCategoryGap={7}>
+            <BarChart accessibilityLayer={false} data={[...rows]} layout="vertical" margin={{ top: 0, right: 0, bottom: 0, left: 0 }} barGap={1} barCategoryGap={7}>
               <XAxis type="number" hide domain={[0, most]} />
               <YAxis type="category" dataKey="short" width={44} tickLine={false} axisLine={false} tick={{ fontSize: 13, fill: '#686c7d' }} />
               <Bar dataKey="tuitionMinor" fill="#1d5a73" isAnimationActive={false} />
