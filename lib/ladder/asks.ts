@@ -2,6 +2,7 @@ import { chordName, type ChordStyle } from '../harmony/chord-name';
 import { chordOf, spelledMembers } from '../harmony/chord';
 import { degreesOf, printedDegree, type Degree, type VoicedNote } from '../harmony/degree';
 import { judge } from '../harmony/judge';
+import { optionOf, smoothestPath } from '../harmony/path-finder';
 import { printedNote, type NoteName } from '../harmony/note';
 import { placementsOf, targetName, type Target } from '../harmony/target';
 import { roleOf, tensionUse } from '../harmony/tones';
@@ -26,11 +27,11 @@ export function asksOf(spec: PlaySpec, { key, turn }: DrawnKey): Ask[] {
   const symbols = asked.map((chord) => chordRoot(written, chord) + chord.suffix);
   if (spec.how !== 'voicing') return symbols.map((symbol) => unvoiced(spec, symbol));
   const options = asked.map((chord, at) => optionsOf(symbols[at] ?? '', chord));
-  const path = nearestPath(options);
+  const path = smoothestPath(options.map((row) => row.map((notes) => optionOf(notes, ''))));
   return symbols.map((symbol, at) => {
     const chord = chordOf(symbol);
     const accepts = (options[at] ?? []).map((notes): Target => ({ chord, notes }));
-    return { symbol, shown: { chord, notes: path[at] ?? [] }, accepts, answer: null };
+    return { symbol, shown: { chord, notes: path?.voicings[at]?.notes ?? [] }, accepts, answer: null };
   });
 }
 
@@ -44,25 +45,6 @@ function unvoiced(spec: PlaySpec, symbol: string): Ask {
   const target: Target = { chord: chordOf(symbol), notes: [] };
   return { symbol, shown: target, accepts: [target], answer: answerWords(spec, target) };
 }
-
-/** Semitones that all voices move between two chords of the same size, paired from the bottom up. */
-export const movement = (from: readonly VoicedNote[], to: readonly VoicedNote[]): number =>
-  from.reduce((sum, { key }, at) => sum + Math.abs(key - (to[at]?.key ?? key)), 0);
-
-type Path = { notes: VoicedNote[][]; cost: number };
-
-function nearestPath(options: readonly VoicedNote[][][]): VoicedNote[][] {
-  let paths: Path[] = (options[0] ?? []).map((notes) => ({ notes: [notes], cost: 0 }));
-  for (const next of options.slice(1)) {
-    paths = next.map((notes) => {
-      const reached = paths.map((path) => ({ notes: [...path.notes, notes], cost: path.cost + movement(path.notes.at(-1) ?? [], notes) }));
-      return cheapest(reached);
-    });
-  }
-  return cheapest(paths).notes;
-}
-
-const cheapest = (paths: readonly Path[]): Path => paths.reduce((best, path) => (path.cost < best.cost ? path : best));
 
 /** Hears played keys against every voicing that counts; the verdict is against the one they come nearest to. */
 export function judgeAsk({ accepts, shown }: Ask, played: readonly number[]): Verdict {
