@@ -77,20 +77,22 @@ function stepProblems({ verdict, target, onsetOffsetMs, spreadMs }: StepHeard, l
 }
 
 function changeProblems(change: Leading, at: number, steps: readonly StepHeard[], { movePerChange, sevenths, topMoves }: SequenceLimits): string[] {
-  const [from, to] = [steps[at], steps[at + 1]];
-  if (!from?.verdict.isRight || !to?.verdict.isRight) return [];
+  const [from, to] = steps.slice(at, at + 2);
+  // A change between wrong chords says nothing new: the notes come first.
+  if (!from || !to || !from.verdict.isRight || !to.verdict.isRight) return [];
   const where = `From ${targetName(from.target)} to ${targetName(to.target)}`;
-  const wanted = topMoves?.[at];
+  const wanted = topMoves?.[at] ?? change.topMoves;
+  const most = movePerChange ?? change.distance;
   return [
-    movePerChange !== undefined && change.distance > movePerChange && `${where} the voices move ${change.distance} half steps in all; at most ${movePerChange} is asked.`,
-    wanted !== undefined && change.topMoves !== wanted && `${where} the top voice should ${topWords(wanted)}.`,
-    sevenths === 'resolve' && unresolvedWords(from, to),
-  ].filter((text) => typeof text === 'string');
+    change.distance > most ? `${where} the voices move ${change.distance} half steps in all; at most ${most} is asked.` : '',
+    change.topMoves === wanted ? '' : `${where} the top voice should ${topWords(wanted)}.`,
+    sevenths === 'resolve' ? unresolvedWords(from, to) : '',
+  ].filter((text) => text !== '');
 }
 
-function unresolvedWords(from: StepHeard, to: StepHeard): string | false {
+function unresolvedWords(from: StepHeard, to: StepHeard): string {
   const resolution = seventhResolution(soundingOf(from), soundingOf(to));
-  return resolution !== null && !resolution.isResolved && resolution.words;
+  return !resolution || resolution.isResolved ? '' : resolution.words;
 }
 
 const soundingOf = ({ target, keys }: StepHeard): Sounding => ({ target, keys });
