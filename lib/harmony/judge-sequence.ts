@@ -79,7 +79,7 @@ function stepProblems({ verdict, target, onsetOffsetMs, spreadMs }: StepHeard, l
 function changeProblems(change: Leading, at: number, steps: readonly StepHeard[], { movePerChange, sevenths, topMoves }: SequenceLimits): string[] {
   const [from, to] = steps.slice(at, at + 2);
   // A change between wrong chords says nothing new: the notes come first.
-  if (!from || !to || !from.verdict.isRight || !to.verdict.isRight) return [];
+  if (!from || !to || [from, to].some(({ verdict }) => !verdict.isRight)) return [];
   const where = `From ${targetName(from.target)} to ${targetName(to.target)}`;
   const wanted = topMoves?.[at] ?? change.topMoves;
   const most = movePerChange ?? change.distance;
