@@ -62,9 +62,9 @@ const SHAPES: Record<FormName, (parts: Parts, chord: Has) => Degree[][]> = {
 };
 
 function stackOf({ third, fifth, seventh, colour, ninth }: Parts, chord: Has): Degree[] {
+  if (ninth === '1') return ['1', fifth, seventh, third];
   if (isDominant(chord)) return ['1', seventh, third, colour, ninth];
-  if (third === 'b3' && seventh === 'b7') return ['1', '11', seventh, third, fifth];
-  return ninth === '1' ? ['1', fifth, seventh, third] : ['1', third, seventh, ninth, fifth];
+  return third === 'b3' && seventh === 'b7' ? ['1', '11', seventh, third, fifth] : ['1', third, seventh, ninth, fifth];
 }
 
 /** The stacks of degrees in which a chord may be played in this form; none when it has no third or seventh. */

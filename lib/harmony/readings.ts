@@ -12,22 +12,34 @@ const SUFFIXES = [
   '13b9', '13sus4', '7b9b13', '7#9b13', 'maj13', 'm11', '13', 'maj9#11', '9sus4', 'maj9', 'm9', '9', '6/9', 'm6/9', '7b9', '7#9', '7#11', '7b13',
   '7#5', '7b5', '7sus4', 'm(maj7)', 'maj7#11', 'maj7', 'm7', '7', 'm7b5', 'dim7', '6', 'm6', 'sus4', 'aug', 'dim', 'm', '',
 ] as const;
+/** In the order of their half steps above C. */
 const ROOTS: readonly NoteName[] = ['C', 'Db', 'D', 'Eb', 'E', 'F', 'F#', 'G', 'Ab', 'A', 'Bb', 'B'];
+
+/** Twelve bits, one a half step above the root: a chord is compared with what sounds in two operations. */
+type Mask = number;
+type KnownKind = { suffix: string; members: Mask; required: Mask; hasSeventh: boolean };
+
+const ALL_STEPS = 0xfff;
+const bitOf = (step: number): Mask => 1 << (((step % 12) + 12) % 12);
+const maskOf = (steps: readonly number[]): Mask => steps.reduce((mask, step) => mask | bitOf(step), 0);
+/** The same tones counted from another root. */
+const from = (root: number, mask: Mask): Mask => ((mask >> root) | (mask << (12 - root))) & ALL_STEPS;
+
+const KINDS: readonly KnownKind[] = SUFFIXES.map((suffix) => {
+  const chord = chordOf(`C${suffix}`);
+  const hasSeventh = essentialDegrees(chord).some((degree) => degree === 'b7' || degree === '7');
+  return { suffix, members: maskOf(chord.degrees.map(stepOf)), required: maskOf(requiredSteps(chord)), hasSeventh };
+});
+
+const kindAbove = (mask: Mask): KnownKind | undefined => KINDS.find(({ members, required }) => (mask & ~members) === 0 && (required & ~mask) === 0);
 
 /**
  * The chord of this root that has all the played keys and nothing else asked: guide tones and named colours must
  * sound, root and plain fifth may be missing. Null when no known kind fits.
  */
 export function chordOver(root: NoteName, keys: readonly KeyNumber[]): Chord | null {
-  const base = pitchClassOf(root);
-  const steps = new Set(keys.map((key) => (key - base + 1200) % 12));
-  for (const suffix of SUFFIXES) {
-    const chord = chordOf(root + suffix);
-    const members = new Map(chord.degrees.map((degree) => [stepOf(degree), degree]));
-    const isInside = [...steps].every((step) => members.has(step));
-    if (isInside && requiredSteps(chord).every((step) => steps.has(step))) return chord;
-  }
-  return null;
+  const kind = kindAbove(from(pitchClassOf(root), maskOf(keys)));
+  return kind ? chordOf(root + kind.suffix) : null;
 }
 
 /** A colour below the one that gives the chord its name may be missing: a 13 without its 9 is still a 13. */
@@ -44,16 +56,15 @@ function requiredSteps(chord: Chord): number[] {
  * offered, the one whose root is in the bass first. A guess for the screen; the judge never uses it.
  */
 export function readingsOf(keys: readonly KeyNumber[]): ChordReading[] {
-  const sorted = [...new Set(keys)].sort((a, b) => a - b);
-  const bass = sorted[0];
-  if (bass === undefined || sorted.length < 3) return [];
-  const steps = new Set(sorted.map((key) => key % 12));
-  const found = ROOTS.flatMap((root) => {
-    const chord = chordOver(root, sorted);
-    const hasRoot = steps.has(pitchClassOf(root));
-    if (!chord || (!hasRoot && !essentialDegrees(chord).some((degree) => degree === 'b7' || degree === '7'))) return [];
-    const rank = pitchClassOf(root) === bass % 12 ? 0 : hasRoot ? 1 : 2;
-    return [{ rank, reading: { name: hasRoot ? chordName(chord) : `${chordName(chord)} (no root)`, root, suffix: chord.suffix, hasRoot } }];
+  const mask = maskOf(keys);
+  const bass = Math.min(...keys) % 12;
+  if (new Set(keys).size < 3) return [];
+  const found = ROOTS.flatMap((root, at) => {
+    const kind = kindAbove(from(at, mask));
+    const hasRoot = (mask & bitOf(at)) !== 0;
+    if (!kind || (!hasRoot && !kind.hasSeventh)) return [];
+    const name = chordName({ root, bass: null, suffix: kind.suffix });
+    return [{ rank: at === bass ? 0 : hasRoot ? 1 : 2, reading: { name: hasRoot ? name : `${name} (no root)`, root, suffix: kind.suffix, hasRoot } }];
   });
   return found.sort((a, b) => a.rank - b.rank).map(({ reading }) => reading);
 }
