@@ -10,6 +10,7 @@ export default defineConfig({
   },
   test: {
     include: ['{lib,policies,db,jobs,components}/**/*.test.{ts,tsx}', 'tests/published/**/*.test.ts', 'tests/faults/**/*.test.ts', 'tests/support/**/*.test.ts'],
+    benchmark: { include: ['tests/bench/**/*.bench.ts'] },
     globalSetup: 'tests/support/template-db.ts',
     pool: 'threads',
     testTimeout: 20_000,

@@ -32,10 +32,17 @@ export const semitonesOf = (degree: Degree): number => Interval.semitones(INTERV
 /** The same within one octave: 2 for a 9. */
 export const stepOf = (degree: Degree): number => semitonesOf(degree) % 12;
 
+/** Spelled once for each root: a few hundred names in all, asked for thousands of times when a path is sought. */
+const spelled = new Map<NoteName, Map<Degree, NoteName>>();
+
 /** The letter-true note of a degree: the flat 5 of Ab is Ebb, never D. Keeps an octave when the root has one. */
 export function noteOfDegree(root: NoteName, degree: Degree): NoteName {
+  const known = spelled.get(root)?.get(degree);
+  if (known !== undefined) return known;
   const note = Note.transpose(root, INTERVALS[degree]);
   if (note === '') throw new Error(`${root} has no ${degree}`);
+  const ofRoot = spelled.get(root) ?? new Map<Degree, NoteName>();
+  spelled.set(root, ofRoot.set(degree, note));
   return note;
 }
 

@@ -1,7 +1,7 @@
 import { chordName } from './chord-name';
 import { chordOf, type Chord } from './chord';
 import { stepOf } from './degree';
-import { pitchClassOf, type KeyNumber, type NoteName } from './note';
+import { pitchClassOf, printedNote, type KeyNumber, type NoteName } from './note';
 import { essentialDegrees, roleOf } from './tones';
 
 /** One way to hear a set of keys, best first: "Fmaj7", or "Dm9 (no root)". */
@@ -15,9 +15,12 @@ const SUFFIXES = [
 /** In the order of their half steps above C. */
 const ROOTS: readonly NoteName[] = ['C', 'Db', 'D', 'Eb', 'E', 'F', 'F#', 'G', 'Ab', 'A', 'Bb', 'B'];
 
+const PRINTED_ROOTS: readonly string[] = ROOTS.map(printedNote);
+const FEWEST_KEYS = 3;
+
 /** Twelve bits, one a half step above the root: a chord is compared with what sounds in two operations. */
 type Mask = number;
-type KnownKind = { suffix: string; members: Mask; required: Mask; hasSeventh: boolean };
+type KnownKind = { suffix: string; printed: string; members: Mask; required: Mask; hasSeventh: boolean };
 
 const ALL_STEPS = 0xfff;
 const bitOf = (step: number): Mask => 1 << (((step % 12) + 12) % 12);
@@ -28,10 +31,10 @@ const from = (root: number, mask: Mask): Mask => ((mask >> root) | (mask << (12 
 const KINDS: readonly KnownKind[] = SUFFIXES.map((suffix) => {
   const chord = chordOf(`C${suffix}`);
   const hasSeventh = essentialDegrees(chord).some((degree) => degree === 'b7' || degree === '7');
-  return { suffix, members: maskOf(chord.degrees.map(stepOf)), required: maskOf(requiredSteps(chord)), hasSeventh };
+  return { suffix, printed: chordName({ root: '', bass: null, suffix }), members: maskOf(chord.degrees.map(stepOf)), required: maskOf(requiredSteps(chord)), hasSeventh };
 });
 
-const kindAbove = (mask: Mask): KnownKind | undefined => KINDS.find(({ members, required }) => (mask & ~members) === 0 && (required & ~mask) === 0);
+const kindAbove = (mask: Mask): KnownKind | undefined => KINDS.find((kind) => (mask & ~kind.members) === 0 && (kind.required & ~mask) === 0);
 
 /**
  * The chord of this root that has all the played keys and nothing else asked: guide tones and named colours must
@@ -56,15 +59,17 @@ function requiredSteps(chord: Chord): number[] {
  * offered, the one whose root is in the bass first. A guess for the screen; the judge never uses it.
  */
 export function readingsOf(keys: readonly KeyNumber[]): ChordReading[] {
+  if (new Set(keys).size < FEWEST_KEYS) return [];
   const mask = maskOf(keys);
   const bass = Math.min(...keys) % 12;
-  if (new Set(keys).size < 3) return [];
-  const found = ROOTS.flatMap((root, at) => {
+  // The root in the bass, a root higher up, none at all.
+  const [inBass, above, rootless]: ChordReading[][] = [[], [], []];
+  ROOTS.forEach((root, at) => {
     const kind = kindAbove(from(at, mask));
     const hasRoot = (mask & bitOf(at)) !== 0;
-    if (!kind || (!hasRoot && !kind.hasSeventh)) return [];
-    const name = chordName({ root, bass: null, suffix: kind.suffix });
-    return [{ rank: at === bass ? 0 : hasRoot ? 1 : 2, reading: { name: hasRoot ? name : `${name} (no root)`, root, suffix: kind.suffix, hasRoot } }];
+    if (!kind || (!hasRoot && !kind.hasSeventh)) return;
+    const name = PRINTED_ROOTS[at] + kind.printed;
+    (at === bass ? inBass : hasRoot ? above : rootless)?.push({ name: hasRoot ? name : `${name} (no root)`, root, suffix: kind.suffix, hasRoot });
   });
-  return found.sort((a, b) => a.rank - b.rank).map(({ reading }) => reading);
+  return [...(inBass ?? []), ...(above ?? []), ...(rootless ?? [])];
 }

@@ -35,12 +35,27 @@ export function leadingBetween(from: readonly KeyNumber[], to: readonly KeyNumbe
   };
 }
 
-/** Semitones that all voices move, both chords already from the bottom up and of one size: the hot path of the path finder. */
+/** Semitones that all voices move, both chords from the bottom up: the figure of `leadingBetween` alone, for the path finder’s inner loop. */
 export function sortedDistance(from: readonly KeyNumber[], to: readonly KeyNumber[]): number {
-  if (from.length !== to.length) return leadingBetween(from, to).distance;
+  if (from.length !== to.length) return from.length < to.length ? unevenDistance(from, to) : unevenDistance(to, from);
   let distance = 0;
   for (let at = 0; at < from.length; at += 1) distance += Math.abs((from[at] ?? 0) - (to[at] ?? 0));
   return distance;
+}
+
+/** The pairing of `fewInMany`, its cost only: `costs[at]` is the least when the voices so far end at or below `at`. */
+function unevenDistance(few: readonly KeyNumber[], many: readonly KeyNumber[]): number {
+  const costs = new Array<number>(many.length + 1).fill(0);
+  for (const [row, key] of few.entries()) {
+    let before = costs[row] ?? 0;
+    costs[row] = Number.POSITIVE_INFINITY;
+    for (let at = row; at < many.length; at += 1) {
+      const cost = Math.min(before + Math.abs((many[at] ?? 0) - key), costs[at] ?? Number.POSITIVE_INFINITY);
+      before = costs[at + 1] ?? 0;
+      costs[at + 1] = cost;
+    }
+  }
+  return costs[many.length] ?? 0;
 }
 
 type Pair = readonly [KeyNumber, KeyNumber];

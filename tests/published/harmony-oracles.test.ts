@@ -8,7 +8,7 @@ import { judge } from '@/lib/harmony/judge';
 import { frequencyOf, keyOf, pitchClassOf } from '@/lib/harmony/note';
 import { voicingOptions } from '@/lib/harmony/path-finder';
 import { readingsOf } from '@/lib/harmony/readings';
-import { leadingBetween } from '@/lib/harmony/voice-leading';
+import { leadingBetween, sortedDistance } from '@/lib/harmony/voice-leading';
 
 /**
  * Two independent libraries as oracles, for tests only. `chord-symbol` reads symbols: compared are its degrees as a
@@ -80,6 +80,14 @@ describe('properties, 10,000 cases each', () => {
       const moved = (keys: readonly number[]) => keys.map((key) => key + shift);
       const [here, there] = [leadingBetween(a.option.keys, b.option.keys), leadingBetween(moved(a.option.keys), moved(b.option.keys))];
       expect([there.distance, there.largestLeap, there.topMoves, there.parallels.length]).toEqual([here.distance, here.largestLeap, here.topMoves, here.parallels.length]);
+    }), { numRuns: 10_000 });
+  });
+
+  it('the inner loop counts what the full pairing counts, also with unequal numbers of voices', () => {
+    fc.assert(fc.property(voicing, voicing, fc.integer({ min: 1, max: 5 }), (a, b, count) => {
+      const [from, to] = [a.option.keys.slice(0, count), b.option.keys];
+      expect(sortedDistance(from, to)).toBe(leadingBetween(from, to).distance);
+      expect(sortedDistance(to, from)).toBe(leadingBetween(to, from).distance);
     }), { numRuns: 10_000 });
   });
 
