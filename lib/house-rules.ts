@@ -17,6 +17,8 @@ export const HOUSE_RULES = {
   'tuition.due_days': { label: 'Days from the invoice to its due date', schema: z.number().int().min(0).max(120), value: 14 },
   'hearing.wait_days': { label: 'Days before a rung may be heard again', schema: z.number().int().min(0).max(60), value: 7 },
   'hearing.attempts_per_term': { label: 'Attempts at a rung in a term before the lead must agree', schema: z.number().int().min(1).max(20), value: 2 },
+  'practice.reviews_per_day': { label: 'Rungs that come back for review on one day', schema: z.number().int().min(0).max(20), value: 4 },
+  'practice.break_minutes': { label: 'Minutes of playing after which a rest is suggested', schema: z.number().int().min(5).max(90), value: 25 },
 } as const;
 
 export type HouseRuleKey = keyof typeof HOUSE_RULES;

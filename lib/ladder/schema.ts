@@ -37,3 +37,37 @@ export const decideHearingSchema = z.object({
 });
 
 export const stopHearingSchema = z.object({ hearingId: id, reason: words(300).min(3, 'Say why in a few words.') });
+
+const playedKeySchema = z.object({
+  chords: z.array(z.object({ played: z.array(z.number().int()).max(24, 'Too many keys at once.').default([]), byEar: z.enum(['right', 'not_right']).nullable().default(null) })).max(24),
+});
+const practiceMinutes = z.number('Say for how many minutes.').int().min(1, 'At least one minute.').max(300, 'At most 300 minutes at a time.');
+
+/** What was practised just now. Of a review the keys come with it; anything else only tells the minutes. */
+export const finishPracticeSchema = z.object({
+  studentId: id,
+  kind: z.enum(['set', 'review', 'ahead']),
+  itemId: id,
+  minutes: practiceMinutes,
+  how: z.enum(['timed', 'told']).default('timed'),
+  feeling: z.enum(['easy', 'fine', 'hard']).nullable().default(null),
+  note: words(500).default(''),
+  played: z.array(playedKeySchema).max(60).default([]),
+});
+
+export const itHurtsSchema = z.object({ studentId: id, minutes: practiceMinutes, where: words(200).default('') });
+
+const practiceItemSchema = z.object({
+  rungId: id.or(z.literal('')).default(''),
+  piece: words(120).default(''),
+  keys: z.array(z.string().regex(/^[A-G](b|#)?$/, 'Keys are named C, Db, F# and so on.')).max(12).default([]),
+  beatsPerMinute: z.number().int().min(20, 'At least 20 beats a minute.').max(300, 'At most 300 beats a minute.').nullable().default(null),
+  minutes: z.number().int().min(1).max(120, 'At most 120 minutes a day.').nullable().default(null),
+  howRight: words(300).default(''),
+}).refine(({ rungId, piece }) => rungId !== '' || piece !== '', { message: 'Choose a rung, or write what to practise.', path: ['piece'] });
+
+export const setPracticeSchema = z.object({
+  studentId: id,
+  dueOn: z.iso.date('Choose the day until which it is set.'),
+  items: z.array(practiceItemSchema).min(1, 'Set at least one thing.').max(8, 'Eight things are enough.'),
+});

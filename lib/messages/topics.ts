@@ -15,6 +15,8 @@ export const TOPICS = {
   receipt: { label: 'Receipts', always: false },
   payment_failed: { label: 'A payment failed', always: true },
   rung_passed: { label: 'A rung was passed', always: false },
+  practice: { label: 'Practice of a student', always: false },
+  practice_hurt: { label: 'A student said that playing hurts', always: true },
   report: { label: 'Progress reports', always: false },
   pay_check: { label: 'Check of pay', always: true },
   cover_offer: { label: 'Offers to cover', always: true },

@@ -6,6 +6,7 @@ import { countByEar, countHeard, decide, insertScores, proofsOf, stop, type Hear
 import { rebuildStudentRungs } from '@/db/ladder-standing';
 import { findRung, type Rung } from '@/db/ladders';
 import { findPerson, fullName, type Person } from '@/db/people';
+import { enterReview } from '@/db/practice';
 import { houseRulesOn } from '@/db/settings';
 import { transaction } from '@/db/transaction';
 import { AppError, notFound } from '@/lib/errors';
@@ -14,6 +15,7 @@ import { newId } from '@/lib/server/ids';
 import type { LocalDate } from '@/lib/time';
 import { earliestRehearing, mayMove, OUTCOME_WORDS, passProblem, type KeyCount } from '../hearing';
 import { isSpoken } from '../play-spec';
+import { firstReview } from '../review';
 import { weightedScore, type WeightedScore } from '../score';
 import type { decideHearingSchema, stopHearingSchema } from '../schema';
 import { ownHearing } from './record-proof';
@@ -43,6 +45,7 @@ export async function decideHearing(input: Deciding, context: Context): Promise<
     const { outcome, passReason, notePublic, notePrivate } = input;
     await decide(trx, hearing.id, { outcome, passReason, notePublic, notePrivate, keysHeard, totalHundredths, decidedAt: now, decidedOn: today, earliestAgainOn });
     await rebuildStudentRungs(trx, student.id, hearing.editionId);
+    if (outcome === 'passed') await enterReview(trx, { ...firstReview(today), id: newId(), studentId: student.id, rungId: rung.id });
     await auditDecision(trx, context, { hearing, rung, student, input, keysHeard });
     const told = outcome === 'passed' ? await tellRungPassed(trx, context, { hearing, rung, student, notePublic }) : 0;
     return { outcome, keysHeard, earliestAgainOn, told };
