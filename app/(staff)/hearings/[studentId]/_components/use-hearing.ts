@@ -1,6 +1,7 @@
 'use client';
 
 import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
+import type { KeySource } from '@/components/play/play-area';
 import { asksOf, judgeAsk, type Ask } from '@/lib/ladder/asks';
 import type { KeyNumber } from '@/lib/harmony/note';
 import type { Verdict } from '@/lib/harmony/verdict';
@@ -9,7 +10,7 @@ import { sendProof } from '../../actions';
 
 type Rung = NonNullable<HearingScreen['rung']>;
 type Answer = { played: KeyNumber[]; milliseconds: number | null; byEar: 'right' | 'not_right' | null };
-export type Source = 'midi' | 'screen' | 'ear';
+type Source = KeySource | 'ear';
 export type Told = { name: string; played: readonly KeyNumber[]; verdict: Verdict | null; byEar: Answer['byEar']; milliseconds: number | null };
 
 /** The course of a hearing on the screen: which key, which chord of it, what was told last. The server keeps the proofs. */

@@ -15,13 +15,24 @@ import { Checkbox } from '@/components/ui/inputs';
 import type { KeyNumber } from '@/lib/harmony/note';
 import type { Ask } from '@/lib/ladder/asks';
 import { useChordCapture } from './use-chord-capture';
-import type { Hearing, Source } from './use-hearing';
+
+/** How the keys came in. */
+export type KeySource = 'midi' | 'screen';
+type PlayAreaProps = {
+  ask: Ask;
+  /** Whether the asked keys are marked. */
+  isShown: boolean;
+  isBusy: boolean;
+  isRight: (keys: KeyNumber[]) => boolean;
+  /** @param lastDownAt milliseconds on the browser's steady clock; null when keys were put down one by one */
+  onKeys: (keys: KeyNumber[], lastDownAt: number | null, source: KeySource) => void;
+};
 
 /** The keyboard: MIDI, letter keys, mouse or finger. Keys can be kept down one by one and then heard together. */
-export function PlayArea({ hearing, ask, isShown }: { hearing: Hearing; ask: Ask; isShown: boolean }) {
+export function PlayArea({ ask, isShown, isBusy, isRight, onKeys }: PlayAreaProps) {
   const [isLatched, setIsLatched] = useState(false);
   const { held, down, up, clear } = useHeldKeys(isLatched);
-  const source = useRef<Source>('screen');
+  const source = useRef<KeySource>('screen');
   const range = useMemo(() => keyboardRange(ask.shown.notes.map(({ key }) => key)), [ask]);
   const marks = useMemo(() => marksOf(ask.shown.notes), [ask]);
   const base = Math.max(range.lowest, Math.min(60, range.highest - 16));
@@ -31,9 +42,8 @@ export function PlayArea({ hearing, ask, isShown }: { hearing: Hearing; ask: Ask
   const { status, switchOn } = useWebMidi({ onDown: midiDown, onUp: up });
   useComputerKeys({ base, isOn: true, onDown: screenDown, onUp: up });
 
-  const { takeKeys, isRight, isSending } = hearing;
-  const onChord = useCallback((keys: KeyNumber[], lastDownAt: number) => { takeKeys(keys, isLatched ? null : lastDownAt, source.current); if (isLatched) clear(); }, [takeKeys, isLatched, clear]);
-  useChordCapture({ held, isLatched, isOn: !isSending, isRight, onChord });
+  const onChord = useCallback((keys: KeyNumber[], lastDownAt: number) => { onKeys(keys, isLatched ? null : lastDownAt, source.current); if (isLatched) clear(); }, [onKeys, isLatched, clear]);
+  useChordCapture({ held, isLatched, isOn: !isBusy, isRight, onChord });
 
   return (
     <div className="mt-2 grid gap-2">
@@ -45,7 +55,7 @@ export function PlayArea({ hearing, ask, isShown }: { hearing: Hearing; ask: Ask
       <Keyboard {...range} label="Keyboard. Arrows move, Space plays." held={held} {...(isShown ? { marks } : {})} onDown={screenDown} onUp={up} />
       <div className="flex flex-wrap items-center gap-x-4 gap-y-2">
         <Checkbox label="Keep keys down: one finger, or rolled, without the clock" checked={isLatched} onChange={(event) => { clear(); setIsLatched(event.target.checked); }} />
-        {isLatched ? <Button kind="primary" icon={<Ear size={16} aria-hidden />} disabled={held.size === 0 || isSending} onClick={() => onChord([...held], performance.now())}>{`Hear these ${held.size || ''} keys`.replace('  ', ' ')}</Button> : null}
+        {isLatched ? <Button kind="primary" icon={<Ear size={16} aria-hidden />} disabled={held.size === 0 || isBusy} onClick={() => onChord([...held], performance.now())}>{`Hear these ${held.size || ''} keys`.replace('  ', ' ')}</Button> : null}
       </div>
     </div>
   );
