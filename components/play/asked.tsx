@@ -1,4 +1,6 @@
+import { Eye, EyeOff } from 'lucide-react';
 import { GrandStave } from '@/components/stave/grand-stave';
+import { Button } from '@/components/ui/button';
 import type { ChordStyle } from '@/lib/harmony/chord-name';
 import { askName, type Ask } from '@/lib/ladder/asks';
 
@@ -20,3 +22,7 @@ export function ChordsInTurn({ asks, chordNo, chordStyle }: { asks: readonly Ask
     </ol>
   );
 }
+
+export const AnswerSwitch = ({ isShown, onSwitch }: { isShown: boolean; onSwitch: () => void }) => (
+  <Button kind="quiet" icon={isShown ? <EyeOff size={16} aria-hidden /> : <Eye size={16} aria-hidden />} onClick={onSwitch}>{isShown ? 'Hide the answer' : 'Show the answer'}</Button>
+);

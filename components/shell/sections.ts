@@ -1,4 +1,4 @@
-import { BookOpen, CalendarDays, CreditCard, DoorOpen, GraduationCap, HandCoins, Home, Import, ListChecks, Mail, Music4, Settings, SquareCheckBig, Sun, Timer, Users, WalletCards, type LucideIcon } from 'lucide-react';
+import { BookOpen, CalendarDays, CreditCard, DoorOpen, GraduationCap, HandCoins, Home, Import, ListChecks, Mail, Music4, Piano, Settings, SquareCheckBig, Sun, Timer, Users, WalletCards, type LucideIcon } from 'lucide-react';
 import type { Role } from '@/policies/ability';
 
 export type Section = { href: string; label: string; icon: LucideIcon };
@@ -26,7 +26,7 @@ export const SECTIONS: Record<Role, readonly Section[]> = {
     { href: '/bills', label: 'Bills', icon: WalletCards },
   ],
   student: [
-    { href: '/home', label: 'Home', icon: Home }, { href: '/lessons', label: 'Lessons', icon: CalendarDays }, { href: '/progress', label: 'My ladder', icon: Music4 },
+    { href: '/home', label: 'Home', icon: Home }, { href: '/practice', label: 'Practice', icon: Piano }, { href: '/progress', label: 'My ladder', icon: Music4 }, { href: '/lessons', label: 'Lessons', icon: CalendarDays },
     { href: '/bills', label: 'Bills', icon: WalletCards },
   ],
 };

@@ -13,7 +13,7 @@ export const FEELING_WORDS: Record<Feeling, string> = { easy: 'easy', fine: 'fin
 const KEYS_OF_A_REVIEW = 3;
 const KEYS_OF_A_TRY = 4;
 
-type Rung = Pick<RungText, 'spec' | 'criteria' | 'keyPool'>;
+type Rung = Pick<RungText, 'spec' | 'criteria'>;
 
 /** The same words give the same number all day long, so that a page opened twice asks the same keys (FNV-1a, public domain). */
 export function seedOf(text: string): number {
@@ -22,7 +22,7 @@ export function seedOf(text: string): number {
   return hash >>> 0;
 }
 
-type Practice = { kind: PracticeKind; rung: Rung; keys: readonly NoteName[]; seed: number; records: readonly KeyRecord[] };
+type Practice = { kind: PracticeKind; rung: Rung & Pick<RungText, 'keyPool'>; keys: readonly NoteName[]; seed: number; records: readonly KeyRecord[] };
 
 /** Which keys are practised: those the teacher named, each with every turn of the rung; else a few, weak ones sooner. */
 export function practiceKeys({ kind, rung, keys, seed, records }: Practice): DrawnKey[] {

@@ -12,9 +12,6 @@ import { newId } from '@/lib/server/ids';
 import { assertCan } from '@/policies/ability';
 import type { itHurtsSchema } from '../schema';
 
-/** General information, not medical advice (after NASM and PAMA, "Protecting Your Neuromusculoskeletal Health"). */
-export const HURT_ADVICE = ['Stop playing now and rest your hands.', 'Pain is never part of practising, and nobody expects you to play through it.', 'If it does not go away or comes back, see a doctor.'] as const;
-
 /**
  * "This hurts": the playing ends, the teacher and, for a child, the guardians are told, and what was practised so far
  * is kept. No streak breaks and no mark is touched.

@@ -1,8 +1,8 @@
 'use client';
 
-import { Eye, EyeOff, SkipForward } from 'lucide-react';
+import { SkipForward } from 'lucide-react';
 import { useState } from 'react';
-import { AskedAnswer, ChordsInTurn } from '@/components/play/asked';
+import { AnswerSwitch, AskedAnswer, ChordsInTurn } from '@/components/play/asked';
 import { PlayArea } from '@/components/play/play-area';
 import { Button } from '@/components/ui/button';
 import { Checkbox } from '@/components/ui/inputs';
@@ -39,10 +39,6 @@ export function AskPanel({ hearing, rung, chordStyle, goesOn, onGoesOn }: AskPan
     </section>
   );
 }
-
-const AnswerSwitch = ({ isShown, onSwitch }: { isShown: boolean; onSwitch: () => void }) => (
-  <Button kind="quiet" icon={isShown ? <EyeOff size={16} aria-hidden /> : <Eye size={16} aria-hidden />} onClick={onSwitch}>{isShown ? 'Hide the answer' : 'Show the answer'}</Button>
-);
 
 function Heading({ ask, rung, chordStyle, isShown }: { ask: Ask; rung: AskPanelProps['rung']; chordStyle: ChordStyle; isShown: boolean }) {
   const degrees = askDegrees(ask);

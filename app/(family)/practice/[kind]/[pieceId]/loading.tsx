@@ -1,0 +1,3 @@
+import { PageSkeleton } from '@/components/ui/states';
+
+export default function Loading() { return <PageSkeleton />; }
