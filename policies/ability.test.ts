@@ -58,6 +58,15 @@ describe('grants', () => {
     const granted = new Set(ROLES.flatMap((role) => abilityFor(actor({ role, isLead: true })).rules.flatMap(({ subject }) => [subject].flat())));
     expect([...granted].sort()).toEqual([...SUBJECTS].sort());
   });
+  it('to manage is to read, create, update and approve, but never to take lists out of the house', () => {
+    const desk = abilityFor(actor({ role: 'desk' }));
+    for (const name of ['Student', 'Family', 'Enquiry', 'Invoice', 'Payment'] as const) {
+      for (const action of ['read', 'create', 'update', 'approve', 'manage'] as const) expect(may(desk, action, name), `${action} ${name}`).toBe(true);
+      expect(may(desk, 'export', name), `export ${name}`).toBe(false);
+    }
+    const others = (['desk', 'teacher', 'student', 'guardian'] as const).map((role) => abilityFor(actor({ role, isLead: true, studentIds: ['ada'], payerIds: ['p'], taughtStudentIds: ['ada'] })));
+    for (const name of SUBJECTS) expect(others.filter((ability) => ability.can('export', name)), name).toEqual([]);
+  });
   it('only owner and desk hold whole tables of people and money', () => {
     for (const role of ['teacher', 'student', 'guardian'] as const) {
       const ability = abilityFor(actor({ role, studentIds: ['ada'], payerIds: ['p'], taughtStudentIds: ['ada'] }));
