@@ -31,6 +31,13 @@ describe('standing in front of a record', () => {
   it('what may be read but not changed says so in words', () => {
     expect(answerOf(() => assertCan(guardian, 'update', 'Progress', { studentId: 'ada' }))).toMatchObject({ code: 'forbidden', message: 'Your role does not let you do this with a progress.' });
   });
+  it('who may read a list but not take it out is told whose business that is', () => {
+    expect(answerOf(() => assertCan(abilityFor(actor({ role: 'desk' })), 'export', 'Invoice', {}))).toMatchObject({ code: 'forbidden', message: 'Only the owner takes lists out of the house.' });
+    expect(answerOf(() => assertCan(guardian, 'export', 'Student', {}))).toMatchObject({ code: 'not_found' });
+  });
+  it('refuses with the right article', () => {
+    expect(answerOf(() => assertCan(abilityFor(actor({ role: 'teacher', personId: 'mara' })), 'create', 'Occurrence', { plannedTeacherId: 'mara' }))).toMatchObject({ message: 'Your role does not let you do this with an occurrence.' });
+  });
   it('a record without the field that decides is nobody’s', () => {
     for (const record of [{}, { studentId: null }, { studentId: undefined }, { studentId: '' }]) {
       expect(may(guardian, 'update', 'Consent', record), JSON.stringify(record)).toBe(false);

@@ -26,8 +26,11 @@ export const may = (ability: AppAbility, action: Action, name: SubjectName, reco
 export function assertCan(ability: AppAbility, action: Action, name: SubjectName, record: object): void {
   if (may(ability, action, name, record)) return;
   if (!may(ability, 'read', name, record)) throw notFound(wordsFor(name));
-  throw new AppError('forbidden', `Your role does not let you do this with a ${wordsFor(name)}.`);
+  if (action === 'export') throw new AppError('forbidden', 'Only the owner takes lists out of the house.');
+  throw new AppError('forbidden', `Your role does not let you do this with ${withArticle(wordsFor(name))}.`);
 }
+
+const withArticle = (words: string) => `${/^[aeiou]/.test(words) ? 'an' : 'a'} ${words}`;
 
 /** "PayRun" → "pay run". */
 export const wordsFor = (name: SubjectName): string => name.replace(/(?<=[a-z])[A-Z]/g, (letter) => ` ${letter}`).toLowerCase();

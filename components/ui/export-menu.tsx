@@ -12,7 +12,7 @@ const hrefOf = ({ list, runId }: ListOffer, as: FileKind) => `/api/lists/${list}
 export function ExportMenu({ offer }: { offer: ListOffer }) {
   const heading = `${offer.rows === 1 ? '' : 'All '}${plural(offer.rows, 'row')}${offer.note ? `, ${offer.note}` : ''}`;
   return (
-    <Menu align="end" heading={heading} trigger={<button type="button" className={buttonClass('quiet')}><Download size={16} aria-hidden />Export</button>} items={[
+    <Menu align="end" heading={heading} trigger={<button type="button" className={buttonClass('quiet', 'max-md:ml-auto')}><Download size={16} aria-hidden />Export</button>} items={[
       { key: 'xlsx', label: <><FileSpreadsheet size={16} aria-hidden />Spreadsheet (XLSX)</>, downloadHref: hrefOf(offer, 'xlsx') },
       { key: 'csv', label: <><FileText size={16} aria-hidden />Comma-separated (CSV)</>, downloadHref: hrefOf(offer, 'csv') },
     ]} />

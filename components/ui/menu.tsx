@@ -16,7 +16,7 @@ export function Menu({ trigger, items, label, heading, align = 'start' }: MenuPr
     <DropdownMenu.Root>
       <DropdownMenu.Trigger asChild aria-label={label}>{trigger}</DropdownMenu.Trigger>
       <DropdownMenu.Portal>
-        <DropdownMenu.Content align={align} sideOffset={6} className="appear z-50 min-w-52 rounded border border-rule bg-sheet p-1 shadow-lg">
+        <DropdownMenu.Content align={align} sideOffset={6} collisionPadding={8} className="appear z-50 min-w-52 rounded border border-rule bg-sheet p-1 shadow-lg">
           {heading ? <DropdownMenu.Label className="border-b border-rule px-3 py-2 text-small text-ink-3">{heading}</DropdownMenu.Label> : null}
           {items.map((item) => (
             <DropdownMenu.Item key={item.key} disabled={item.disabled} onSelect={'onSelect' in item ? item.onSelect : undefined} className={ITEM} asChild={'downloadHref' in item}>

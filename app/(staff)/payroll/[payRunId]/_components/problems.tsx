@@ -18,7 +18,7 @@ export function Problems({ run, locale }: { run: PayRunScreen; locale: string })
           <li key={index} className="grid gap-x-4 border-t border-rule px-4 py-2 md:grid-cols-[150px_1fr_1fr]">
             <span><b>{problem.name}</b></span>
             <span className="text-ink-2">{formatDate(problem.localDate, locale, 'short')}, {problem.text}</span>
-            <Link href={hrefOf(problem, run.today)} className="text-brick underline-offset-2">{problem.problem}</Link>
+            <Link href={hrefOf(problem, run.today)} className="text-brick underline underline-offset-2">{problem.problem}</Link>
           </li>
         ))}
       </ul>
