@@ -12,8 +12,15 @@ const heads = (db: Db) => db('invoice as i').join('family as f', 'f.id', 'i.fami
 
 export const findInvoice = (db: Db, id: string): Promise<InvoiceHead | undefined> => heads(db).where('i.id', id).first();
 export const invoicesOfFamily = (db: Db, familyId: string): Promise<InvoiceHead[]> => heads(db).where('i.familyId', familyId).orderBy('i.sequenceNo', 'desc');
-/** Newest first; the screen filters and sorts what it was given. */
-export const recentInvoices = (db: Db, limit: number): Promise<InvoiceHead[]> => heads(db).orderBy('i.issuedOn', 'desc').orderBy('i.sequenceNo', 'desc').limit(limit);
+/** Newest first, all of them for a null; the screen filters and sorts what it was given. */
+export const recentInvoices = (db: Db, limit: number | null): Promise<InvoiceHead[]> => {
+  const newest = heads(db).orderBy('i.issuedOn', 'desc').orderBy('i.sequenceNo', 'desc');
+  return limit === null ? newest : newest.limit(limit);
+};
+export async function countInvoices(db: Db): Promise<number> {
+  const [row]: { count: number }[] = await db('invoice').where({ state: 'issued' }).count('id as count');
+  return row?.count ?? 0;
+}
 
 export type LineRow = { id: string; invoiceId: string; lineNo: number; chargeKind: string; text: string; quantity: number; unitMinor: number; grossMinor: number; netMinor: number; taxMinor: number; taxTreatment: string; taxBp: number; explainJson: string; studentId: string | null };
 export const linesOfInvoice = (db: Db, invoiceId: string): Promise<LineRow[]> =>

@@ -26,7 +26,11 @@ const listed = (db: Db, ability: AppAbility) => db('payment as m').join('payer a
     db.raw('coalesce((SELECT sum(a.amount_minor) FROM allocation a WHERE a.payment_id = m.id AND a.reversed_on IS NULL), 0) AS allocated_minor'))
   .orderBy('m.receivedAt', 'desc').orderBy('m.receiptNo', 'desc');
 
-export const recentPayments = (db: Db, ability: AppAbility, limit: number): Promise<PaymentRow[]> => listed(db, ability).limit(limit);
+export const recentPayments = (db: Db, ability: AppAbility, limit: number | null): Promise<PaymentRow[]> => (limit === null ? listed(db, ability) : listed(db, ability).limit(limit));
+export async function countPayments(db: Db, ability: AppAbility): Promise<number> {
+  const [row]: { count: number }[] = await db('payment as m').where(allowedRows(ability, 'read', 'Payment', 'm')).count('m.id as count');
+  return row?.count ?? 0;
+}
 export const paymentsOfPayers = (db: Db, ability: AppAbility, payerIds: readonly string[]): Promise<PaymentRow[]> => listed(db, ability).whereIn('m.payerId', [...payerIds]);
 
 export type AllocationRow = { paymentId: string; amountMinor: number; sentence: string };

@@ -31,6 +31,13 @@ describe('standing in front of a record', () => {
   it('what may be read but not changed says so in words', () => {
     expect(answerOf(() => assertCan(guardian, 'update', 'Progress', { studentId: 'ada' }))).toMatchObject({ code: 'forbidden', message: 'Your role does not let you do this with a progress.' });
   });
+  it('who may read a list but not take it out is told whose business that is', () => {
+    expect(answerOf(() => assertCan(abilityFor(actor({ role: 'desk' })), 'export', 'Invoice', {}))).toMatchObject({ code: 'forbidden', message: 'Only the owner takes lists out of the house.' });
+    expect(answerOf(() => assertCan(guardian, 'export', 'Student', {}))).toMatchObject({ code: 'not_found' });
+  });
+  it('refuses with the right article', () => {
+    expect(answerOf(() => assertCan(abilityFor(actor({ role: 'teacher', personId: 'mara' })), 'create', 'Occurrence', { plannedTeacherId: 'mara' }))).toMatchObject({ message: 'Your role does not let you do this with an occurrence.' });
+  });
   it('a record without the field that decides is nobody’s', () => {
     for (const record of [{}, { studentId: null }, { studentId: undefined }, { studentId: '' }]) {
       expect(may(guardian, 'update', 'Consent', record), JSON.stringify(record)).toBe(false);
@@ -57,6 +64,15 @@ describe('grants', () => {
   it('nobody is granted a subject that does not exist, and none is granted to nobody', () => {
     const granted = new Set(ROLES.flatMap((role) => abilityFor(actor({ role, isLead: true })).rules.flatMap(({ subject }) => [subject].flat())));
     expect([...granted].sort()).toEqual([...SUBJECTS].sort());
+  });
+  it('to manage is to read, create, update and approve, but never to take lists out of the house', () => {
+    const desk = abilityFor(actor({ role: 'desk' }));
+    for (const name of ['Student', 'Family', 'Enquiry', 'Invoice', 'Payment'] as const) {
+      for (const action of ['read', 'create', 'update', 'approve', 'manage'] as const) expect(may(desk, action, name), `${action} ${name}`).toBe(true);
+      expect(may(desk, 'export', name), `export ${name}`).toBe(false);
+    }
+    const others = (['desk', 'teacher', 'student', 'guardian'] as const).map((role) => abilityFor(actor({ role, isLead: true, studentIds: ['ada'], payerIds: ['p'], taughtStudentIds: ['ada'] })));
+    for (const name of SUBJECTS) expect(others.filter((ability) => ability.can('export', name)), name).toEqual([]);
   });
   it('only owner and desk hold whole tables of people and money', () => {
     for (const role of ['teacher', 'student', 'guardian'] as const) {

@@ -14,9 +14,13 @@ const DESK_MANAGES: SubjectName[] = [
   'Payment', 'Recital', 'Room', 'Seat', 'Student',
 ];
 
+/** Lists that may be taken out of the house as files, by the owner alone: each names people or what they pay. */
+const OWNER_EXPORTS: SubjectName[] = ['Student', 'Family', 'Enquiry', 'Invoice', 'Payment', 'TuitionRun', 'PayRun'];
+
 const grants: Record<Role, Grant> = {
   owner: (_actor, allow) => {
     allow('manage', OWNER_MANAGES);
+    allow('export', OWNER_EXPORTS);
     allow('read', ['Hearing', 'HearingNote', 'Progress', 'Practice', 'Audit']);
   },
 

@@ -14,6 +14,7 @@ import { boardLessons } from '@/lib/calendar/server/day-board';
 import { familyLessons, reportAbsence } from '@/lib/calendar/server/family-lessons';
 import { checkIn, markAttendance } from '@/lib/calendar/server/mark-attendance';
 import { readEnquiries } from '@/lib/calendar/server/read-enquiries';
+import { takeEnquiryList } from '@/lib/calendar/server/take-enquiry-list';
 import { takeEnquiry } from '@/lib/calendar/server/take-enquiry';
 import { deskEnquirySchema } from '@/lib/calendar/schema';
 import { importList } from '@/lib/imports/server/import-screen';
@@ -26,18 +27,24 @@ import { startHearing } from '@/lib/ladder/server/start-hearing';
 import { askAboutPay, passOverTeacher } from '@/lib/payroll/server/check-pay';
 import { gatherPayRun } from '@/lib/payroll/server/gather-pay-run';
 import { payRunScreen } from '@/lib/payroll/server/pay-run-screen';
+import { payWorkbook } from '@/lib/payroll/server/pay-workbook';
 import { teacherPay } from '@/lib/payroll/server/teacher-pay';
 import { readAccess } from '@/lib/people/server/access';
 import { changeHouseRule, readHouseRules } from '@/lib/people/server/house-rules';
 import { invitePerson } from '@/lib/people/server/invite-person';
 import { readFamily } from '@/lib/people/server/read-families';
 import { readStudent } from '@/lib/people/server/read-students';
+import { takeFamilyList } from '@/lib/people/server/take-family-list';
+import { takeStudentList } from '@/lib/people/server/take-student-list';
 import { askForRelease } from '@/lib/tuition/server/ask-for-release';
 import { payerInvoice } from '@/lib/tuition/server/payer-bills';
 import { previewTuitionRun } from '@/lib/tuition/server/preview-tuition-run';
 import { readPriceList, setPrice } from '@/lib/tuition/server/price-list';
 import { paymentList, staffInvoice } from '@/lib/tuition/server/staff-invoice';
+import { takeBillList } from '@/lib/tuition/server/take-bill-list';
 import { takeDeskPayment } from '@/lib/tuition/server/take-desk-payment';
+import { takeInvoiceList } from '@/lib/tuition/server/take-invoice-list';
+import { takePaymentList } from '@/lib/tuition/server/take-payment-list';
 import { tuitionRunDetail } from '@/lib/tuition/server/tuition-run-screen';
 import { COLUMNS, LATER, MATRIX, type BuiltRow, type Column, type RowName, type Verb } from './matrix';
 
@@ -64,6 +71,22 @@ const TODAY = { startsAt: instantOf('2026-11-17', 0, ZONE), endsAt: instantOf('2
 const mark = (attendance: 'present' | 'excused'): Attempt => (context, { seatToday }) =>
   markAttendance({ seatId: seatToday, attendance, minutesLate: null, toldAt: null, toldVia: 'desk', rowVersion: 1 }, context);
 const always = (work: (context: Context) => Promise<unknown>): Attempt => async (context) => { await work(context); return true; };
+
+/** Every list, one after the other: who may take one may take them all, or the grants are crooked. */
+async function takesEveryList(context: Context): Promise<boolean> {
+  const lists: Attempt[] = [takeStudentList, takeFamilyList, takeEnquiryList, takeInvoiceList, takePaymentList, (asking) => takeBillList({ runId: made.runId }, asking), (asking) => payWorkbook({ runId: made.payRunId, as: 'csv' }, asking)];
+  let taken = 0;
+  for (const take of lists) {
+    try {
+      await take(context, {} as Target);
+      taken += 1;
+    } catch (error) {
+      if (!(error instanceof AppError) || !['not_found', 'forbidden'].includes(error.code)) throw error;
+    }
+  }
+  if (taken !== 0 && taken !== lists.length) throw new Error(`${taken} of ${lists.length} lists were given out`);
+  return taken > 0;
+}
 
 /** One attempt for each verb of each row. A record that is not shown, a null and a refusal are all "none". */
 const ATTEMPTS: Record<RowName, Partial<Record<Verb, Attempt>>> = {
@@ -116,6 +139,7 @@ const ATTEMPTS: Record<RowName, Partial<Record<Verb, Attempt>>> = {
   },
   ladder: { read: schoolLadder, approve: always((context) => installLadder({}, context)) },
   accounts: { read: always(readAccess), write: always((context) => invitePerson({ personId: 'viktor', email: 'viktor@example.org', role: 'teacher' }, context)) },
+  exports: { export: takesEveryList },
   imports: { read: always(importList) },
 };
 

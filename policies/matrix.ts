@@ -7,7 +7,7 @@
 export const COLUMNS = ['owner', 'desk', 'teacher', 'substitute', 'lead', 'student', 'guardian'] as const;
 export type Column = (typeof COLUMNS)[number];
 
-export type Verb = 'read' | 'write' | 'approve';
+export type Verb = 'read' | 'write' | 'approve' | 'export';
 type Right = `${Verb} ${'own' | 'all'}`;
 type Cells = Record<Column, readonly Right[] | 'none'>;
 
@@ -72,6 +72,7 @@ export const MATRIX = {
     cells: { owner: ['read all', 'approve all'], desk: readAll, teacher: readAll, substitute: readAll, lead: readAll, student: readAll, guardian: readAll },
   },
   accounts: { thing: 'Who may sign in', tries: ['read', 'write'], cells: { ...NOBODY, owner: readAndWriteAll } },
+  exports: { thing: 'Export of personal data: a list taken out as a file', tries: ['export'], cells: { ...NOBODY, owner: ['export all'] } },
   imports: { thing: 'Import at start-up', tries: ['read'], cells: { ...NOBODY, owner: readAll } },
 } as const satisfies Record<string, BuiltRow>;
 
@@ -88,6 +89,6 @@ export const LATER: readonly LaterRow[] = [
   { thing: 'Change of a rung in a draft edition', from: 'editing the ladder' },
   { thing: 'Term report', from: 'reports' },
   { thing: 'Scholarship', from: 'scholarships' },
-  { thing: 'Export of personal data', from: 'export and erasure' },
+  { thing: 'Export of one’s own data, or a child’s', from: 'export and erasure' },
   { thing: 'Audit', from: 'the audit screen' },
 ];

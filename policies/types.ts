@@ -17,7 +17,8 @@ export type Actor = {
   taughtStudentIds: readonly string[];
 };
 
-export type Action = 'read' | 'create' | 'update' | 'approve' | 'manage';
+/** To manage is to read, create, update and approve. Taking lists out of the house ('export') is granted on its own, always. */
+export type Action = 'read' | 'create' | 'update' | 'approve' | 'manage' | 'export';
 
 export const SUBJECTS = [
   'Account', 'Attendance', 'Audit', 'BusyTime', 'Consent', 'Contact', 'Enquiry', 'Enrolment', 'Excuse', 'Family', 'HealthNote',

@@ -8,7 +8,7 @@ import { abilityFor, may, ROLES } from './ability';
 import { SUBJECTS, type Action, type Actor, type AppAbility, type SubjectName } from './types';
 import { allowedRows } from './where';
 
-const ACTIONS: Action[] = ['read', 'create', 'update', 'approve', 'manage'];
+const ACTIONS: Action[] = ['read', 'create', 'update', 'approve', 'manage', 'export'];
 const FIELDS = ['id', 'studentId', 'payerId', 'personId', 'actorId', 'assessorId', 'plannedTeacherId', 'taughtById', 'askedByUserId', 'familyId'] as const;
 /** Ids that differ by case, by a space or by a sign, an empty one and a hostile one. */
 const IDS = ['ada', 'Ada', 'ada ', 'ben', 'theo', 'mara', 'é', '漢', '', "x' OR 1=1 --", '%', '1'];

@@ -34,7 +34,7 @@ export function FamilyBalance({ balance, locale, action }: FamilyBalanceProps) {
           {balance.payments.length === 0 ? <p className="text-small text-ink-3">None yet.</p> : null}
           <ul>{balance.payments.slice(0, SHOWN).map((payment) => (
             <li key={payment.id} className="flex justify-between gap-3 border-t border-rule py-2">
-              <span>{formatDate(payment.receivedOn, locale)}, {METHOD_WORDS[payment.method as keyof typeof METHOD_WORDS]}<span className="block text-small text-ink-3">{payment.payerName}</span></span>
+              <span>{formatDate(payment.receivedOn, locale)}, {METHOD_WORDS[payment.method]}<span className="block text-small text-ink-3">{payment.payerName}</span></span>
               <span className="num">{say(payment.amountMinor, words)}</span>
             </li>
           ))}</ul>

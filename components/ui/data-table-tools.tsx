@@ -1,18 +1,20 @@
 'use client';
 
-import { Columns3, Download } from 'lucide-react';
+import { Columns3 } from 'lucide-react';
 import { Popover } from 'radix-ui';
 import type { ReactNode } from 'react';
+import type { ListOffer } from '@/lib/exports/lists';
 import { buttonClass } from './button';
 import type { Column } from './data-table-core';
+import { ExportMenu } from './export-menu';
 import { INPUT } from './field';
 
 type TableToolsProps<Row> = {
   label: string; search: string; onSearch: (text: string) => void; columns: readonly Column<Row>[]; visibility: Record<string, boolean>;
-  onVisibility: (visibility: Record<string, boolean>) => void; count: number; total: number; exportHref?: string; children?: ReactNode;
+  onVisibility: (visibility: Record<string, boolean>) => void; count: number; total: number; exportOf?: ListOffer | null; children?: ReactNode;
 };
 
-export function TableTools<Row>({ label, search, onSearch, columns, visibility, onVisibility, count, total, exportHref, children }: TableToolsProps<Row>) {
+export function TableTools<Row>({ label, search, onSearch, columns, visibility, onVisibility, count, total, exportOf, children }: TableToolsProps<Row>) {
   return (
     <div className="no-print flex flex-wrap items-center gap-3 border-b border-rule px-3 py-3">
       <input type="search" aria-label={`Search in ${label}`} placeholder="Search in this list" value={search} onChange={(event) => onSearch(event.target.value)} className={`${INPUT} max-w-64 basis-48 flex-1`} />
@@ -31,7 +33,7 @@ export function TableTools<Row>({ label, search, onSearch, columns, visibility, 
           </Popover.Content>
         </Popover.Portal>
       </Popover.Root>
-      {exportHref ? <a href={exportHref} download className={buttonClass('quiet')}><Download size={16} aria-hidden />Export</a> : null}
+      {exportOf ? <ExportMenu offer={exportOf} /> : null}
     </div>
   );
 }

@@ -3,6 +3,7 @@
 import { createColumnHelper, useTable, type SortingState } from '@tanstack/react-table';
 import { useRouter } from 'next/navigation';
 import { useMemo, useState, type ReactNode } from 'react';
+import type { ListOffer } from '@/lib/exports/lists';
 import { compareValues, tableFeatureSet, type Column } from './data-table-core';
 import { TableHead } from './data-table-head';
 import { BodyRow } from './data-table-row';
@@ -18,7 +19,8 @@ type DataTableProps<Row> = {
   rowHref?: (row: Row) => string;
   empty: ReactNode;
   initialSort?: { id: string; desc?: boolean };
-  exportHref?: string;
+  /** The whole list as a file, where this person may take it. */
+  exportOf?: ListOffer | null;
   tools?: ReactNode;
   footer?: ReactNode;
   /** For rows that the browser asks for: a skeleton of their size, or what to do when they do not come. */
@@ -27,7 +29,7 @@ type DataTableProps<Row> = {
 };
 
 /** A table that sorts, searches, hides columns, moves by keyboard, and becomes a list of cards on a phone. */
-export function DataTable<Row>({ label, rows, columns, rowKey, rowHref, empty, initialSort, exportHref, tools, footer, state, onRetry }: DataTableProps<Row>) {
+export function DataTable<Row>({ label, rows, columns, rowKey, rowHref, empty, initialSort, exportOf, tools, footer, state, onRetry }: DataTableProps<Row>) {
   const router = useRouter();
   const [sorting, setSorting] = useState<SortingState>(initialSort ? [{ id: initialSort.id, desc: initialSort.desc ?? false }] : []);
   const [search, setSearch] = useState('');
@@ -55,7 +57,7 @@ export function DataTable<Row>({ label, rows, columns, rowKey, rowHref, empty, i
   const isActiveShown = tableRows.some(({ original }) => rowKey(original.row) === activeKey);
   return (
     <div>
-      <TableTools label={label} search={search} onSearch={setSearch} columns={columns} visibility={visibility} onVisibility={setVisibility} count={tableRows.length} total={rows.length} exportHref={exportHref}>{tools}</TableTools>
+      <TableTools label={label} search={search} onSearch={setSearch} columns={columns} visibility={visibility} onVisibility={setVisibility} count={tableRows.length} total={rows.length} exportOf={exportOf}>{tools}</TableTools>
       <div className="overflow-x-auto md:max-h-[78dvh] md:overflow-y-auto print:max-h-none print:overflow-visible">
         <table className="w-full border-collapse" aria-label={label}>
           <TableHead columns={shown} sorting={sorting} onSort={setSorting} />

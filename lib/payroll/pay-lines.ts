@@ -23,6 +23,10 @@ export type PayLine = {
   text: string; minutes: number; rateId: string | null; rateMinor: number; shareBp: number; amountMinor: number; problem: string; explain: string[];
 };
 
+const NOT_MARKED = 'Not marked yet';
+/** Where a line is put right: what is not marked, with the marks; everything else is a rate that is missing or doubtful. */
+export const mendedBy = (problem: string): 'marks' | 'rates' => (problem.startsWith(NOT_MARKED) ? 'marks' : 'rates');
+
 /**
  * What one lesson pays, from its attendance marks, the rates and the rules of its day (S26, S27). The substitute is paid
  * by HR7 and the absent teacher nothing; a group goes by its size at the start, not by who came. Rounded once per line.
@@ -32,7 +36,7 @@ export function payLinesOfLesson(lesson: LessonFacts, facts: PayFacts): PayLine[
   const worker = taughtBy ?? planned;
   if (!worker) return [];
   const unmarked = lesson.seats.filter(({ attendance }) => attendance === 'expected');
-  if (unmarked.length > 0) return [problemLine(lesson, worker, `Not marked yet: ${unmarked.map(({ studentName }) => studentName).join(', ')}.`)];
+  if (unmarked.length > 0) return [problemLine(lesson, worker, `${NOT_MARKED}: ${unmarked.map(({ studentName }) => studentName).join(', ')}.`)];
   if (!planned || planned.personId === worker.personId) return [ownLine(lesson, worker, facts)];
   return [substituteLine(lesson, worker, planned, facts), coveredLine(lesson, planned, worker)];
 }

@@ -13,14 +13,15 @@ import { TeachersTab } from './_components/teachers-tab';
 
 export const metadata = { title: 'Settings' };
 
-export default async function SettingsPage() {
+/** A tab can be addressed: /settings?tab=teachers. */
+export default async function SettingsPage({ searchParams }: { searchParams: Promise<{ tab?: string }> }) {
   const context = await requireContextTo('update', 'Settings');
   const { school, today } = context;
   const [list, access, rules] = [await readPriceList(context), await readAccess(context), await readHouseRules(context)];
   return (
     <>
       <PageHeader title="Settings" sub="Every price, rule and tax treatment has a first day. What was billed or marked before keeps the rule of its day." />
-      <Tabs label="Settings" tabs={[
+      <Tabs label="Settings" initial={(await searchParams).tab} tabs={[
         { key: 'prices', label: 'Prices', content: <PricesTab list={list} school={school} today={today} /> },
         { key: 'tax', label: 'Tax', content: <TaxTab list={list} locale={school.locale} today={today} /> },
         { key: 'rules', label: 'House rules', content: <RulesTab rules={rules.rules} history={rules.history} locale={school.locale} today={today} /> },

@@ -3,6 +3,7 @@ import { PageHeader } from '@/components/ui/page-header';
 import { plural } from '@/lib/format';
 import { readStudents } from '@/lib/people/server/read-students';
 import { requireContextTo } from '@/lib/server/context';
+import { may } from '@/policies/ability';
 import { StudentTable } from './_components/student-table';
 
 export const metadata = { title: 'Students' };
@@ -14,7 +15,7 @@ export default async function StudentsPage() {
   return (
     <>
       <PageHeader title={isTeacher && !context.actor.isLead ? 'My students' : 'Students'} sub={`${plural(rows.length, 'student')}.`} actions={<Find />} />
-      <StudentTable rows={rows} today={context.today} showsFamily={!isTeacher} />
+      <StudentTable rows={rows} today={context.today} showsFamily={!isTeacher} mayExport={may(context.ability, 'export', 'Student')} />
     </>
   );
 }

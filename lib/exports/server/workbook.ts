@@ -4,7 +4,7 @@ import { minorDigitsOf, plainAmount } from '@/lib/money';
 import { safeText, type Cell } from './cells';
 
 export type SheetColumn = { header: string; width?: number };
-export type WorkbookSheet = { name: string; title: string; columns: readonly SheetColumn[]; rows: readonly (readonly Cell[])[]; totals?: readonly Cell[] };
+export type WorkbookSheet = { name: string; title: string; columns: readonly SheetColumn[]; rows: readonly (readonly Cell[])[]; totals?: readonly (readonly Cell[])[] };
 export type Workbook = { currency: string; madeAt: number; sheets: readonly WorkbookSheet[] };
 
 const FORBIDDEN = /[[\]:*?/\\]/g;
@@ -38,17 +38,20 @@ function addSheet(book: ExcelJS.Workbook, name: string, { title, columns, rows, 
   sheet.addRow([]);
   sheet.addRow(columns.map(({ header }) => safeText(header))).font = { bold: true };
   for (const row of rows) addCells(sheet.addRow([]), row, currency);
-  if (totals) {
+  for (const total of totals ?? []) {
     const last = sheet.addRow([]);
-    addCells(last, totals, currency);
+    addCells(last, total, currency);
     last.font = { bold: true };
   }
   columns.forEach(({ width }, index) => { sheet.getColumn(index + 1).width = width ?? 14; });
 }
 
-function addCells(row: ExcelJS.Row, cells: readonly Cell[], currency: string): void {
+function moneyFormatOf(currency: string): string {
   const digits = minorDigitsOf(currency);
-  const moneyFormat = digits === 0 ? '#,##0' : `#,##0.${'0'.repeat(digits)}`;
+  return digits === 0 ? '#,##0' : `#,##0.${'0'.repeat(digits)}`;
+}
+
+function addCells(row: ExcelJS.Row, cells: readonly Cell[], currency: string): void {
   cells.forEach((cell, index) => {
     const target = row.getCell(index + 1);
     if (cell === null) return;
@@ -58,8 +61,8 @@ function addCells(row: ExcelJS.Row, cells: readonly Cell[], currency: string): v
       target.value = new Date(`${cell.date}T00:00:00Z`);
       target.numFmt = 'yyyy-mm-dd';
     } else {
-      target.value = Number(plainAmount(cell.amountMinor, currency));
-      target.numFmt = moneyFormat;
+      target.value = Number(plainAmount(cell.amountMinor, cell.currency ?? currency));
+      target.numFmt = moneyFormatOf(cell.currency ?? currency);
     }
   });
 }

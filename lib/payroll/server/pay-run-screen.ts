@@ -7,6 +7,7 @@ import { notFound } from '@/lib/errors';
 import type { Context } from '@/lib/server/context';
 import { addMonths, type LocalDate } from '@/lib/time';
 import { assertCan } from '@/policies/ability';
+import { mendedBy } from '../pay-lines';
 import type { PayRunState } from '../pay-run-state';
 import { payTotalsOf, type PayTotals } from '../pay-totals';
 
@@ -26,7 +27,7 @@ export async function payRunList(context: Context): Promise<{ runs: PayRunRow[];
 
 export type TeacherSays = { words: string; tone: 'ok' | 'wait' | 'bad' | 'neutral' };
 export type TeacherRow = PayTotals & { engagementId: string; name: string; says: TeacherSays };
-export type RunProblem = { engagementId: string; name: string; localDate: LocalDate; text: string; problem: string };
+export type RunProblem = { engagementId: string; name: string; localDate: LocalDate; text: string; problem: string; mendedBy: ReturnType<typeof mendedBy> };
 export type RunQuery = { queryId: string; engagementId: string; name: string; aboutOn: LocalDate; aboutText: string; text: string };
 export type MonthShare = { month: string; tuitionMinor: number; payMinor: number };
 export type PayRunScreen = {
@@ -41,7 +42,7 @@ export async function payRunScreen({ payRunId }: { payRunId: string }, context: 
   if (!run) throw notFound('pay run');
   const facts = await factsOf(context, run);
   const teachers = facts.teachers.map((teacher) => teacherRow(teacher, facts, context.school.locale));
-  const problems = facts.lines.filter(({ problem }) => problem !== '').map(({ engagementId, localDate, text, problem }) => ({ engagementId, name: facts.nameOf(engagementId), localDate, text, problem }));
+  const problems = facts.lines.filter(({ problem }) => problem !== '').map(({ engagementId, localDate, text, problem }) => ({ engagementId, name: facts.nameOf(engagementId), localDate, text, problem, mendedBy: mendedBy(problem) }));
   const queries = facts.queries.filter(({ state }) => state === 'open').map(({ id, engagementId, aboutOn, aboutText, text }) => ({ queryId: id, engagementId, name: facts.nameOf(engagementId), aboutOn, aboutText, text }));
   const { label, state, startsOn, endsOn, answerByOn, currency } = run;
   return {

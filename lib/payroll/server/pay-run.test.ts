@@ -99,6 +99,7 @@ describe('what stands in the way', () => {
     const payRunId = await built();
     const screen = await payRunScreen({ payRunId }, owner);
     expect(screen.problems.map(({ problem }) => problem).sort()).toEqual(['Not marked yet: Ada Vale.', 'There is no rate for lesson of 50 minutes.']);
+    expect(screen.problems.map(({ problem, mendedBy }) => [problem.slice(0, 3), mendedBy]).sort()).toEqual([['Not', 'marks'], ['The', 'rates']]);
     expect(screen.teachers[0]?.says).toEqual({ words: '2 lines to put right', tone: 'bad' });
     expect(screen.blocked).toBe('Put right 2 lines of Mara first.');
     await expect(send(payRunId)).rejects.toMatchObject({ message: '2 lines cannot be paid yet. Put them right first.' });

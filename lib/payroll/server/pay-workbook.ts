@@ -24,7 +24,7 @@ type Paid = { teacher: Engagement; lines: StoredPayLine[] };
 
 /** The run as a workbook: a summary and a sheet per teacher, with the same totals as the screen. A closed run is then marked as taken. */
 export async function payWorkbook({ runId, as }: { runId: string; as: 'xlsx' | 'csv' }, context: Context): Promise<Response> {
-  assertCan(context.ability, 'read', 'PayRun', {});
+  assertCan(context.ability, 'export', 'PayRun', {});
   const run = await findPayRun(context.db, runId);
   if (!run) throw notFound('pay run');
   const paid = await paidTeachers(context, run);
@@ -50,7 +50,7 @@ const totalCells = (first: string, totals: PayTotals): Cell[] => [
 
 const summarySheet = (run: PayRunWithPeriod, paid: Paid[]): WorkbookSheet => ({
   name: 'Summary', title: `${run.label}. ${NOTE}`, columns: SUMMARY_COLUMNS.map((header, index) => ({ header, width: index === 0 ? 28 : 13 })),
-  rows: paid.map(({ teacher, lines }) => totalCells(teacher.name, payTotalsOf(lines))), totals: totalCells('All', payTotalsOf(paid.flatMap(({ lines }) => lines))),
+  rows: paid.map(({ teacher, lines }) => totalCells(teacher.name, payTotalsOf(lines))), totals: [totalCells('All', payTotalsOf(paid.flatMap(({ lines }) => lines)))],
 });
 
 function lineCells(line: StoredPayLine): Cell[] {
@@ -65,7 +65,7 @@ function teacherSheet(run: PayRunWithPeriod, { teacher, lines }: Paid): Workbook
   const totals = payTotalsOf(lines);
   return {
     name: teacher.name, title: `${teacher.name}, ${run.label}`, columns: LINE_COLUMNS.map((header, index) => ({ header, width: index === 2 ? 34 : index === 8 ? 70 : 12 })), rows: lines.map(lineCells),
-    totals: ['Total', null, null, totals.minutes, null, null, { amountMinor: totals.grossMinor }, { amountMinor: totals.reimbursementMinor }, null],
+    totals: [['Total', null, null, totals.minutes, null, null, { amountMinor: totals.grossMinor }, { amountMinor: totals.reimbursementMinor }, null]],
   };
 }
 

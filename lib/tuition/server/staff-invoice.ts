@@ -3,7 +3,7 @@ import type * as z from 'zod';
 import { findInvoice, invoicesOfFamily, linesOfInvoice, partsOfShares, recentInvoices, settledOfShares, sharesFor, taxOfInvoice, type InvoiceHead, type TaxRow } from '@/db/invoice-reads';
 import { creditOfPayers, instalmentsFor } from '@/db/open-items';
 import { payersOfFamilies } from '@/db/payers';
-import { paymentsOfPayers, recentPayments } from '@/db/payments';
+import { paymentsOfPayers, recentPayments, type PaymentMethod } from '@/db/payments';
 import { notFound } from '@/lib/errors';
 import { sumOf } from '@/lib/money';
 import type { Context } from '@/lib/server/context';
@@ -42,10 +42,10 @@ export async function staffInvoice({ invoiceId }: z.output<typeof invoiceSchema>
 export type InvoiceRow = { invoiceId: string; documentNo: string; familyId: string; familyName: string; label: string; issuedOn: LocalDate; dueOn: LocalDate; totalMinor: number; openMinor: number; state: ShareState; currency: string };
 const LIST_LIMIT = 2000;
 
-/** Every issued invoice with what is open of it; the worst of its parts decides its state. */
-export async function invoiceList(context: Context): Promise<InvoiceRow[]> {
+/** Every issued invoice with what is open of it, the newest ones unless all are wanted; the worst of its parts decides its state. */
+export async function invoiceList(context: Context, limit: number | null = LIST_LIMIT): Promise<InvoiceRow[]> {
   assertCan(context.ability, 'read', 'Invoice', {});
-  return rowsOf(await recentInvoices(context.db, LIST_LIMIT), context);
+  return rowsOf(await recentInvoices(context.db, limit), context);
 }
 
 async function rowsOf(invoices: InvoiceHead[], context: Context): Promise<InvoiceRow[]> {
@@ -68,12 +68,12 @@ function stateOfWhole(totalMinor: number, openMinor: number, nextDueOn: LocalDat
   return openMinor < totalMinor ? 'part_paid' : 'open';
 }
 
-export type PaymentListRow = { id: string; receivedOn: LocalDate; receiptNo: string; payerName: string; familyName: string; method: string; amountMinor: number; creditMinor: number; currency: string; note: string };
+export type PaymentListRow = { id: string; receivedOn: LocalDate; receiptNo: string; payerName: string; familyName: string; method: PaymentMethod; amountMinor: number; creditMinor: number; currency: string; note: string };
 
 /** Money received, newest first. */
-export async function paymentList(context: Context): Promise<PaymentListRow[]> {
+export async function paymentList(context: Context, limit: number | null = LIST_LIMIT): Promise<PaymentListRow[]> {
   assertCan(context.ability, 'read', 'Payment', {});
-  return (await recentPayments(context.db, context.ability, LIST_LIMIT)).map(toPaymentRow);
+  return (await recentPayments(context.db, context.ability, limit)).map(toPaymentRow);
 }
 
 const toPaymentRow = (row: Awaited<ReturnType<typeof recentPayments>>[number]): PaymentListRow => ({

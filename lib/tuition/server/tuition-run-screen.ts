@@ -26,7 +26,7 @@ export type RunBill = {
   familyId: string; familyName: string; state: ItemState; totalMinor: number; lastTotalMinor: number | null; changeKind: ItemWithFamily['changeKind']; changeText: string; problem: string; heldReason: string; invoiceId: string | null;
   lines: { text: string; amountMinor: number; steps: string[] }[]; shares: { payerName: string; amountMinor: number; sentences: string[]; dues: { dueOn: LocalDate; amountMinor: number }[] }[];
 };
-export type RunDetail = RunRow & { periodFrom: LocalDate; periodTo: LocalDate; bills: RunBill[]; mailCount: number; controlTotalMinor: number; lastTotalMinor: number; currency: string; mayRelease: boolean; kind: 'term' | 'month'; period: string };
+export type RunDetail = RunRow & { periodFrom: LocalDate; periodTo: LocalDate; bills: RunBill[]; mailCount: number; controlTotalMinor: number; lastTotalMinor: number; currency: string; mayRelease: boolean; mayExport: boolean; kind: 'term' | 'month'; period: string };
 
 /** One run for looking at: what each family would get, beside the last time, and why. */
 export async function tuitionRunDetail({ runId }: { runId: string }, context: Context): Promise<RunDetail> {
@@ -43,7 +43,7 @@ export async function tuitionRunDetail({ runId }: { runId: string }, context: Co
     runId, label: run.label, state: run.state, dueOn: run.dueOn, kind: run.kind, period: run.termId ?? run.periodFrom.slice(0, 7), periodFrom: run.periodFrom, periodTo: run.periodTo, bills, currency: items[0]?.currency ?? context.school.currency,
     families: familiesIn('planned', 'released', 'held', 'problem'), held: familiesIn('held', 'problem'), released: familiesIn('released'), totalMinor, controlTotalMinor: run.controlTotalMinor,
     lastTotalMinor: items.reduce((sum, { lastTotalMinor }) => sum + (lastTotalMinor ?? 0), 0), mailCount: bills.filter(({ state }) => state === 'planned').reduce((sum, { shares }) => sum + shares.length, 0),
-    mayRelease: may(context.ability, 'approve', 'TuitionRun'),
+    mayRelease: may(context.ability, 'approve', 'TuitionRun'), mayExport: may(context.ability, 'export', 'TuitionRun'),
   };
 }
 

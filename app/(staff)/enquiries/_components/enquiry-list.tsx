@@ -12,11 +12,12 @@ import { ENQUIRY_WORDS, wishWords } from '@/lib/calendar/enquiry-words';
 import { formatDate, plural } from '@/lib/format';
 import { localDateOf, type LocalDate } from '@/lib/time';
 
-type EnquiryListProps = { open: readonly Enquiry[]; ended: readonly Enquiry[]; locale: string; zone: string; now: number; today: LocalDate };
+type EnquiryListProps = { open: readonly Enquiry[]; ended: readonly Enquiry[]; locale: string; zone: string; now: number; today: LocalDate; mayExport: boolean };
 
 const TONES: Record<Enquiry['state'], ChipTone> = { new: 'bad', answered: 'neutral', slot_offered: 'wait', trial_booked: 'info', trial_taken: 'info', deciding: 'wait', waiting_list: 'neutral', enrolled: 'ok', closed: 'neutral' };
 
-export function EnquiryList({ open, ended, locale, zone, now, today }: EnquiryListProps) {
+export function EnquiryList({ open, ended, locale, zone, now, today, mayExport }: EnquiryListProps) {
+  const exportOf = mayExport ? { list: 'enquiries' as const, rows: open.length + ended.length, note: 'open and ended lately' } : null;
   const columns: Column<Enquiry>[] = [
     { id: 'student', header: 'Student', isTitle: true, value: ({ studentName }) => studentName, cell: ({ studentName, studentAge }) => <>{studentName}{studentAge ? <span className="font-normal text-ink-3">, {studentAge}</span> : null}</> },
     { id: 'state', header: 'State', value: ({ state }) => ENQUIRY_WORDS[state], cell: ({ state }) => <Chip tone={TONES[state]}>{ENQUIRY_WORDS[state]}</Chip> },
@@ -27,7 +28,7 @@ export function EnquiryList({ open, ended, locale, zone, now, today }: EnquiryLi
     { id: 'do', header: '', value: () => '', cell: ({ id, state }) => (state === 'new' || state === 'answered' ? <ButtonLink href={`/openings?enquiry=${id}`}>Find an opening</ButtonLink> : null) },
   ];
   const table = (rows: readonly Enquiry[], label: string, empty: string) => (
-    <Sheet flush><DataTable label={label} rows={rows} columns={columns} rowKey={({ id }) => id} rowHref={({ id }) => `/enquiries/${id}`} initialSort={{ id: 'age' }} empty={<EmptyState title={empty}>When a stranger asks for a trial lesson, or somebody rings, it stands here with its next step.</EmptyState>} /></Sheet>
+    <Sheet flush><DataTable label={label} rows={rows} columns={columns} rowKey={({ id }) => id} rowHref={({ id }) => `/enquiries/${id}`} initialSort={{ id: 'age' }} exportOf={exportOf} empty={<EmptyState title={empty}>When a stranger asks for a trial lesson, or somebody rings, it stands here with its next step.</EmptyState>} /></Sheet>
   );
   return <Tabs label="Enquiries" tabs={[{ key: 'open', label: `Open (${open.length})`, content: table(open, 'open enquiries', 'No open enquiries') }, { key: 'ended', label: 'Ended lately', content: table(ended, 'ended enquiries', 'None has ended yet') }]} />;
 }

@@ -12,10 +12,10 @@ const COLUMNS: Column<FamilyListRow>[] = [
   { id: 'payers', header: 'Payers', value: ({ payers }) => payers },
 ];
 
-export function FamilyTable({ rows }: { rows: readonly FamilyListRow[] }) {
+export function FamilyTable({ rows, mayExport }: { rows: readonly FamilyListRow[]; mayExport: boolean }) {
   return (
     <Sheet flush>
-      <DataTable label="families" rows={rows} columns={COLUMNS} rowKey={({ id }) => id} rowHref={({ id }) => `/families/${id}`} initialSort={{ id: 'name' }}
+      <DataTable label="families" rows={rows} columns={COLUMNS} rowKey={({ id }) => id} rowHref={({ id }) => `/families/${id}`} initialSort={{ id: 'name' }} exportOf={mayExport ? { list: 'families', rows: rows.length } : null}
         empty={<EmptyState title="No families yet">A family account opens with the first enrolment of a student, or through the importer.</EmptyState>} />
     </Sheet>
   );

@@ -8,7 +8,9 @@ import type { StudentListRow } from '@/db/student-lists';
 import { weeklyWords } from '@/lib/calendar/weekday-words';
 import { ageOn, type LocalDate } from '@/lib/time';
 
-export function StudentTable({ rows, today, showsFamily }: { rows: readonly StudentListRow[]; today: LocalDate; showsFamily: boolean }) {
+type StudentTableProps = { rows: readonly StudentListRow[]; today: LocalDate; showsFamily: boolean; mayExport: boolean };
+
+export function StudentTable({ rows, today, showsFamily, mayExport }: StudentTableProps) {
   const columns: Column<StudentListRow>[] = [
     { id: 'name', header: 'Student', isTitle: true, value: ({ name }) => name },
     { id: 'age', header: 'Age', align: 'right', value: ({ bornOn }) => (bornOn ? ageOn(bornOn, today) : null) },
@@ -19,7 +21,7 @@ export function StudentTable({ rows, today, showsFamily }: { rows: readonly Stud
   ];
   return (
     <Sheet flush>
-      <DataTable label="students" rows={rows} columns={columns} rowKey={({ id }) => id} rowHref={({ id }) => `/students/${id}`} initialSort={{ id: 'name' }}
+      <DataTable label="students" rows={rows} columns={columns} rowKey={({ id }) => id} rowHref={({ id }) => `/students/${id}`} initialSort={{ id: 'name' }} exportOf={mayExport ? { list: 'students', rows: rows.length } : null}
         empty={<EmptyState title="No students yet">Students appear with their trial lesson or their enrolment, or all at once through the importer.</EmptyState>} />
     </Sheet>
   );

@@ -3,6 +3,7 @@ import { say } from '@/lib/explained';
 import { sumOf } from '@/lib/money';
 import { requireContextTo } from '@/lib/server/context';
 import { invoiceList } from '@/lib/tuition/server/staff-invoice';
+import { invoicesToTake } from '@/lib/tuition/server/take-invoice-list';
 import { TuitionSections } from '../_components/tuition-sections';
 import { InvoiceTable } from './_components/invoice-table';
 
@@ -16,7 +17,7 @@ export default async function InvoicesPage() {
     <>
       <PageHeader title="Invoices" sub={`Open altogether: ${say(sumOf(rows.map(({ openMinor }) => openMinor)), words)}`} />
       <TuitionSections current="/tuition/invoices" />
-      <InvoiceTable rows={rows} locale={words.locale} />
+      <InvoiceTable rows={rows} locale={words.locale} toTake={await invoicesToTake(context)} />
     </>
   );
 }

@@ -3,6 +3,7 @@ import { TakePayment } from '@/components/tuition/take-payment';
 import { requireContextTo } from '@/lib/server/context';
 import { paymentList } from '@/lib/tuition/server/staff-invoice';
 import { payerChoices } from '@/lib/tuition/server/take-desk-payment';
+import { paymentsToTake } from '@/lib/tuition/server/take-payment-list';
 import { previewPayment, takePayment } from '../actions';
 import { TuitionSections } from '../_components/tuition-sections';
 import { PaymentTable } from './_components/payment-table';
@@ -16,7 +17,7 @@ export default async function PaymentsPage() {
     <>
       <PageHeader title="Payments" sub="Every payment has a receipt and says what it settled." actions={<TakePayment payers={payers} today={context.today} take={takePayment} preview={previewPayment} />} />
       <TuitionSections current="/tuition/payments" />
-      <PaymentTable rows={rows} locale={context.school.locale} />
+      <PaymentTable rows={rows} locale={context.school.locale} toTake={await paymentsToTake(context)} />
     </>
   );
 }

@@ -7,12 +7,11 @@ import type { Column } from '@/components/ui/data-table-core';
 import { Sheet } from '@/components/ui/sheet';
 import { EmptyState } from '@/components/ui/states';
 import { say } from '@/lib/explained';
+import { BILL_WORDS } from '@/lib/tuition/bill-words';
 import type { RunBill, RunDetail } from '@/lib/tuition/server/tuition-run-screen';
 import { BillDrawer } from './bill-drawer';
 
-const STATES: Record<RunBill['state'], { words: string; tone: ChipTone }> = {
-  planned: { words: 'ready', tone: 'wait' }, held: { words: 'held back', tone: 'neutral' }, problem: { words: 'problem', tone: 'bad' }, released: { words: 'released', tone: 'ok' }, gone: { words: 'nothing to charge', tone: 'neutral' },
-};
+const TONES: Record<RunBill['state'], ChipTone> = { planned: 'wait', held: 'neutral', problem: 'bad', released: 'ok', gone: 'neutral' };
 const FILTERS = ['all', 'new', 'changed', 'gone', 'held'] as const;
 type Filter = (typeof FILTERS)[number];
 const FILTER_WORDS: Record<Filter, string> = { all: 'All', new: 'New', changed: 'Changed', gone: 'Gone', held: 'Held back' };
@@ -31,7 +30,7 @@ export function RunBills({ run, locale }: { run: RunDetail; locale: string }) {
     { id: 'why', header: 'Beside last time', value: whyOf, cell: (bill) => <span className={bill.problem ? 'text-brick' : 'text-ink-2'}>{whyOf(bill)}</span> },
     { id: 'last', header: 'Last tuition', align: 'right', value: ({ lastTotalMinor }) => lastTotalMinor, cell: ({ lastTotalMinor }) => (lastTotalMinor === null ? '—' : say(lastTotalMinor, words)) },
     { id: 'now', header: 'Now', align: 'right', value: ({ totalMinor }) => totalMinor, cell: ({ totalMinor }) => <b>{say(totalMinor, words)}</b> },
-    { id: 'state', header: 'State', value: ({ state }) => STATES[state].words, cell: ({ state }) => <Chip tone={STATES[state].tone}>{STATES[state].words}</Chip> },
+    { id: 'state', header: 'State', value: ({ state }) => BILL_WORDS[state], cell: ({ state }) => <Chip tone={TONES[state]}>{BILL_WORDS[state]}</Chip> },
   ];
   const rows = run.bills.filter((bill) => fits(bill, filter));
   return (
@@ -43,7 +42,7 @@ export function RunBills({ run, locale }: { run: RunDetail; locale: string }) {
           </button>
         ))}
       </div>
-      <DataTable label="bills of this run" rows={rows} columns={columns} rowKey={({ familyId }) => familyId} empty={<EmptyState title="Nothing here">{filter === 'all' ? 'No family has anything to charge in this period: either it is billed already, or no lessons are planned.' : 'No bill of this kind in the run.'}</EmptyState>} />
+      <DataTable label="bills of this run" rows={rows} columns={columns} rowKey={({ familyId }) => familyId} exportOf={run.mayExport ? { list: 'bills', rows: run.bills.length, runId: run.runId } : null} empty={<EmptyState title="Nothing here">{filter === 'all' ? 'No family has anything to charge in this period: either it is billed already, or no lessons are planned.' : 'No bill of this kind in the run.'}</EmptyState>} />
       <BillDrawer bill={run.bills.find(({ familyId }) => familyId === openId) ?? null} run={run} words={words} onClose={() => setOpenId(null)} />
     </Sheet>
   );

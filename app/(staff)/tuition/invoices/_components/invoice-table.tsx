@@ -10,7 +10,7 @@ import { formatDate } from '@/lib/format';
 import { SHARE_WORDS } from '@/lib/tuition/share-state';
 import type { InvoiceRow } from '@/lib/tuition/server/staff-invoice';
 
-export function InvoiceTable({ rows, locale }: { rows: readonly InvoiceRow[]; locale: string }) {
+export function InvoiceTable({ rows, locale, toTake }: { rows: readonly InvoiceRow[]; locale: string; toTake: number | null }) {
   const columns: Column<InvoiceRow>[] = [
     { id: 'number', header: 'Number', isTitle: true, value: ({ documentNo }) => documentNo, cell: ({ documentNo }) => <span className="num">{documentNo}</span> },
     { id: 'family', header: 'Family', value: ({ familyName }) => familyName },
@@ -23,7 +23,7 @@ export function InvoiceTable({ rows, locale }: { rows: readonly InvoiceRow[]; lo
   ];
   return (
     <Sheet flush>
-      <DataTable label="invoices" rows={rows} columns={columns} rowKey={({ invoiceId }) => invoiceId} rowHref={({ invoiceId }) => `/tuition/invoices/${invoiceId}`} initialSort={{ id: 'number', desc: true }}
+      <DataTable label="invoices" rows={rows} columns={columns} rowKey={({ invoiceId }) => invoiceId} rowHref={({ invoiceId }) => `/tuition/invoices/${invoiceId}`} initialSort={{ id: 'number', desc: true }} exportOf={toTake === null ? null : { list: 'invoices', rows: toTake }}
         empty={<EmptyState title="No invoices yet">They appear here when a tuition run is released.</EmptyState>} />
     </Sheet>
   );
