@@ -8,17 +8,26 @@ const ATTACK_SECONDS = 0.02;
 const PARTIALS = [1, 0.42, 0.22, 0.1, 0.05];
 
 let shared: AudioContext | null = null;
+let current: GainNode | null = null;
 
 /** Lets a voicing be heard, softly, made on the spot from sine waves. Does nothing where sound is not possible. */
-export async function playKeys(keys: readonly KeyNumber[]): Promise<void> {
-  if (typeof AudioContext === 'undefined' || keys.length === 0) return;
+export const playKeys = (keys: readonly KeyNumber[]): Promise<void> => playInTime([keys], 0);
+
+/** Chords one after the other, so many seconds apart. Pressed again it begins anew instead of sounding twice. */
+export async function playInTime(chords: readonly (readonly KeyNumber[])[], secondsApart: number): Promise<void> {
+  if (typeof AudioContext === 'undefined') return;
   const audio = (shared ??= new AudioContext());
   await audio.resume();
-  const out = audio.createGain();
-  out.gain.value = LOUDNESS / Math.sqrt(keys.length);
+  current?.disconnect();
+  const out = (current = audio.createGain());
   out.connect(audio.destination);
-  const start = audio.currentTime + 0.01;
-  for (const key of keys) soundKey(audio, out, { key, start });
+  const begin = audio.currentTime + 0.01;
+  chords.forEach((keys, at) => {
+    const chord = audio.createGain();
+    chord.gain.value = LOUDNESS / Math.sqrt(Math.max(1, keys.length));
+    chord.connect(out);
+    for (const key of keys) soundKey(audio, chord, { key, start: begin + at * secondsApart });
+  });
 }
 
 function soundKey(audio: AudioContext, out: AudioNode, { key, start }: { key: KeyNumber; start: number }): void {

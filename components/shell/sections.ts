@@ -1,4 +1,4 @@
-import { BookOpen, CalendarDays, CreditCard, DoorOpen, GraduationCap, HandCoins, Home, Import, ListChecks, Mail, Music4, Piano, Settings, SquareCheckBig, Sun, Timer, Users, WalletCards, type LucideIcon } from 'lucide-react';
+import { BookOpen, CalendarDays, CreditCard, DoorOpen, GraduationCap, HandCoins, Home, Import, ListChecks, Mail, Music4, Piano, Settings, SquareCheckBig, Sun, Timer, Users, WalletCards, Waypoints, type LucideIcon } from 'lucide-react';
 import type { Role } from '@/policies/ability';
 
 export type Section = { href: string; label: string; icon: LucideIcon };
@@ -14,20 +14,21 @@ const PAYROLL: Section = { href: '/payroll', label: 'Payroll', icon: HandCoins }
 const ROOMS: Section = { href: '/rooms', label: 'Rooms', icon: DoorOpen };
 const REGISTER: Section = { href: '/register', label: 'Register', icon: SquareCheckBig };
 const IMPORT: Section = { href: '/import', label: 'Import', icon: Import };
+const VOICINGS: Section = { href: '/voicings', label: 'Voicings', icon: Waypoints };
 const SETTINGS: Section = { href: '/settings', label: 'Settings', icon: Settings };
 
 /** What each hat finds in the stave of sections, most used first. The first four stand in the bar of a phone. */
 export const SECTIONS: Record<Role, readonly Section[]> = {
   owner: [TODAY, CALENDAR, ENQUIRIES, STUDENTS, FAMILIES, LADDER, REGISTER, TUITION, PAYROLL, ROOMS, IMPORT, SETTINGS],
   desk: [TODAY, CALENDAR, ENQUIRIES, STUDENTS, FAMILIES, REGISTER, LADDER, TUITION, ROOMS],
-  teacher: [TODAY, CALENDAR, { ...STUDENTS, label: 'My students' }, LADDER, { href: '/my-hours', label: 'My hours', icon: Timer }],
+  teacher: [TODAY, CALENDAR, { ...STUDENTS, label: 'My students' }, LADDER, VOICINGS, { href: '/my-hours', label: 'My hours', icon: Timer }],
   guardian: [
     { href: '/home', label: 'Home', icon: Home }, { href: '/lessons', label: 'Lessons', icon: CalendarDays }, { href: '/progress', label: 'Progress', icon: BookOpen },
     { href: '/bills', label: 'Bills', icon: WalletCards },
   ],
   student: [
     { href: '/home', label: 'Home', icon: Home }, { href: '/practice', label: 'Practice', icon: Piano }, { href: '/progress', label: 'My ladder', icon: Music4 }, { href: '/lessons', label: 'Lessons', icon: CalendarDays },
-    { href: '/bills', label: 'Bills', icon: WalletCards },
+    VOICINGS, { href: '/bills', label: 'Bills', icon: WalletCards },
   ],
 };
 

@@ -1,4 +1,5 @@
 import { ChevronDown } from 'lucide-react';
+import Link from 'next/link';
 import { plural } from '@/lib/format';
 import type { SchoolLevel, SchoolRung } from '@/lib/ladder/server/school-ladder';
 
@@ -30,6 +31,7 @@ function RungRow({ rung, climbers }: { rung: SchoolRung; climbers: number }) {
     <li className="grid gap-x-6 gap-y-2 border-b border-rule px-4 py-3 last:border-b-0 lg:grid-cols-[minmax(0,1fr)_minmax(0,1fr)_210px]">
       <div>
         <p className="font-bold"><span className="num mr-2 text-ink-3">{rung.code}</span>{rung.title}</p>
+        <p><Link href={`/sheets/${rung.id}`} className="inline-block py-1 text-small font-semibold text-petrol hover:underline" aria-label={`Practice sheet of ${rung.title}`}>Practice sheet</Link></p>
         <p className="text-small text-ink-3">{askedWords(rung)}</p>
         {rung.needs.length > 0 ? <p className="mt-1 text-small text-ink-3">{`Needs ${rung.needs.map(({ title, kind }) => (kind === 'must' ? title : `${title} (better first)`)).join(', ')}.`}</p> : null}
       </div>

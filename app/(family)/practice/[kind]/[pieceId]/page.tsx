@@ -17,7 +17,7 @@ export default async function PieceOfPracticePage({ params }: { params: Promise<
   if (!today || !piece) notFound();
   return (
     <>
-      <PageHeader title={piece.rung?.plainTitle ?? piece.text} sub={piece.rung ? `${piece.rung.code} ${piece.rung.title}` : undefined} actions={<ButtonLink href="/practice" kind="quiet">All of today</ButtonLink>} />
+      <PageHeader title={piece.rung?.plainTitle ?? piece.text} sub={piece.rung ? `${piece.rung.code} ${piece.rung.title}` : undefined} actions={<>{piece.rung ? <ButtonLink href={`/sheets/${piece.rung.id}`} kind="quiet">Practice sheet</ButtonLink> : null}<ButtonLink href="/practice" kind="quiet">All of today</ButtonLink></>} />
       <PracticeRoom piece={piece} studentId={today.student.id} reachSemitones={today.student.reachSemitones} breakMinutes={today.breakMinutes} chordStyle={today.chordStyle} locale={context.school.locale} />
     </>
   );
