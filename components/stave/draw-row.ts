@@ -4,8 +4,9 @@ import { drawStaves, type VexFlow } from './draw-stave';
 
 export type RowChord = { name: string; notes: readonly NoteName[] };
 
-export const SYSTEM_HEIGHT = 236;
-const SYMBOL_ROOM = 26;
+export const SYSTEM_HEIGHT = 222;
+/** The staves bring room of their own above their lines. */
+const SYMBOL_ROOM = 8;
 const BAR_WIDTH = 104;
 const CLEF_WIDTH = 52;
 const LEFT = 22;
@@ -31,7 +32,7 @@ function drawLine(vex: VexFlow, pen: Vex.RenderContext, chords: readonly RowChor
     const startX = drawStaves(vex, pen, { x, y: top + SYMBOL_ROOM, width, isFirst: at === 0 }, notes);
     pen.save();
     pen.setFont('var(--font-hanken), var(--font-music), sans-serif', 15, 'bold');
-    pen.fillText(name, startX, top + 18);
+    pen.fillText(name, startX, top + 24);
     pen.restore();
     x += width;
   });

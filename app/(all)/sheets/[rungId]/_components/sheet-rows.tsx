@@ -29,7 +29,7 @@ function Row({ row: { label, asks, chords, degrees } }: { row: SheetRow }) {
       <div className="mt-2 grid gap-4 sm:grid-cols-2 xl:grid-cols-3">
         {asks.map((ask, at) => (
           <div key={at} className="min-w-0">
-            <p className="mb-1"><b>{chords[at]?.name}</b> <span className="text-ink-2">{degrees[at]}</span></p>
+            <p className="mb-1">{chords[at]?.name === label ? null : <b>{chords[at]?.name} </b>}<span className="text-ink-2">{degrees[at]}</span></p>
             {ask.shown.notes.length > 0 ? <Keyboard {...keyboardRange(ask.shown.notes.map(({ key }) => key))} label={`Keys of ${chords[at]?.name ?? ''}`} held={NO_KEYS} marks={marksOf(ask.shown.notes)} /> : null}
           </div>
         ))}
