@@ -71,3 +71,31 @@ export const setPracticeSchema = z.object({
   dueOn: z.iso.date('Choose the day until which it is set.'),
   items: z.array(practiceItemSchema).min(1, 'Set at least one thing.').max(8, 'Eight things are enough.'),
 });
+
+const plainWords = (most: number) => words(most).min(3, 'Guardians read this: write a few plain words.');
+const noteName = z.string().regex(/^[A-G](b|#)?$/, 'Keys are named C, Db, F# and so on.');
+
+/** A rung of the edition being prepared, as the editor sends it. `turns` is the written form of what is asked. */
+export const rungDraftSchema = z.object({
+  title: words(80).min(3, 'Give it a title.'), plainTitle: plainWords(80), canDo: plainWords(200), soundsLike: plainWords(200),
+  how: z.enum(['voicing', 'free', 'spell', 'name_tensions']),
+  turns: z.string().max(4000, 'At most 4000 signs.'),
+  seconds: z.number().positive('More than none.').max(600).nullable(),
+  beatsPerMinute: z.number().int().min(20, 'At least 20.').max(300, 'At most 300.').nullable(),
+  beatsPerChord: z.number().int().min(1).max(16).nullable(),
+  slipsPerTurn: z.number().int().min(0).max(10), isShuffled: z.boolean(), listenFor: words(200).min(3, 'Say what the teacher listens for.'),
+  keyPool: z.array(noteName).min(1, 'Choose at least one key.').max(15),
+  keysDrawn: z.number().int().min(1).max(60), keysNeeded: z.number().int().min(1).max(60),
+  must: z.array(id).max(10), should: z.array(id).max(10),
+});
+
+export const changeRungSchema = rungDraftSchema.extend({ rungId: id, rule: z.enum(['same', 'kept', 're_check']) });
+export const addRungSchema = z.object({
+  code: z.string().trim().regex(/^[0-9]{1,2}\.[0-9]{1,2}[a-z]?$/, 'A code such as 4.3 or 4.3a.'),
+  afterRungId: id,
+  /** The rung it was split from: those who have that one are credited this one. Empty for one that is wholly new. */
+  fromRungId: id.or(z.literal('')),
+});
+export const leaveOutRungSchema = z.object({ rungId: id, /** those who have it are credited this one */ intoRungId: id });
+export const startEditionSchema = z.object({ label: words(40).min(3, 'Name the edition, for example “Second edition”.') });
+export const publishEditionSchema = z.object({ /** what the rehearsal showed, so that nothing else is published than what was looked at */ climbers: z.number().int().min(0) });
