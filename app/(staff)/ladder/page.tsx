@@ -1,3 +1,4 @@
+import { ButtonLink } from '@/components/ui/button';
 import { PageHeader } from '@/components/ui/page-header';
 import { EmptyState } from '@/components/ui/states';
 import { plural } from '@/lib/format';
@@ -26,7 +27,7 @@ export default async function LadderPage() {
   const rungCount = ladder.levels.reduce((sum, { rungs }) => sum + rungs.length, 0);
   return (
     <>
-      <PageHeader title="Ladder" sub={`${ladder.label}: ${plural(ladder.levels.length, 'level')}, ${plural(rungCount, 'rung')}. ${plural(ladder.climbers, 'student')} on it. The figures carry no names.`} />
+      <PageHeader title="Ladder" sub={`${ladder.label}: ${plural(ladder.levels.length, 'level')}, ${plural(rungCount, 'rung')}. ${plural(ladder.climbers, 'student')} on it. The figures carry no names.`} actions={may(context.ability, 'update', 'Ladder') ? <ButtonLink href="/ladder/edition">Next edition</ButtonLink> : undefined} />
       <div className="grid gap-3">
         {ladder.levels.map((level, at) => <LevelSheet key={level.no} level={level} climbers={ladder.climbers} isOpen={at === 0} />)}
       </div>

@@ -12,7 +12,7 @@ export function States() {
       <Sheet title="Nothing, not yet, not now">
         <EmptyState title="No enquiries" action={<Button kind="primary">New enquiry</Button>}>When a stranger asks for a trial lesson, it stands here with its next step.</EmptyState>
         <hr className="border-rule" />
-        <ListSkeleton rows={3} />
+        <div data-example><ListSkeleton rows={3} /></div>
         <hr className="border-rule" />
         <ErrorState />
       </Sheet>
