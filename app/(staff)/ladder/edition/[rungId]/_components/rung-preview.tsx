@@ -3,6 +3,7 @@
 import { useDeferredValue, useMemo } from 'react';
 import { ChordRow } from '@/components/stave/chord-row';
 import { Sheet } from '@/components/ui/sheet';
+import { printedNote } from '@/lib/harmony/note';
 import type { ChordStyle } from '@/lib/harmony/chord-name';
 import { askName, asksOf, drawnLabel, type Ask } from '@/lib/ladder/asks';
 import type { PlaySpec } from '@/lib/ladder/play-spec';
@@ -41,12 +42,20 @@ function PreviewRow({ asks, label, chordStyle }: { asks: readonly Ask[]; label: 
   return <ChordRow label={label} chords={asks.map((ask) => ({ name: askName(ask, chordStyle), notes: ask.shown.notes.map(({ note }) => note) }))} />;
 }
 
+/** A chord by itself stands with its fellows in one row; chords that follow one another have a row for each key. */
 function shownIn(spec: PlaySpec, keys: readonly string[], chordStyle: ChordStyle): Shown[] {
-  return keys.flatMap((key) => spec.turns.map((_turn, turn): Shown => {
-    try {
-      return { label: drawnLabel(spec, { key, turn }, chordStyle), asks: asksOf(spec, { key, turn }), problem: null };
-    } catch {
-      return { label: key, asks: null, problem: 'This does not fit its place on the keyboard in this key. Widen the place.' };
-    }
-  }));
+  const rows = keys.flatMap((key) => spec.turns.map((turn, at) => ({ isSingle: turn.length === 1, turn: at, row: shownInKey(spec, key, at, chordStyle) })));
+  const singles = spec.turns.flatMap((turn, at): Shown[] => {
+    const fitting = rows.flatMap(({ row, turn: of }) => (of === at && row.problem === null ? row.asks : []));
+    return turn.length === 1 && fitting.length > 0 ? [{ label: turn[0]?.stacks.join(' or ') || 'Any voicing', asks: fitting, problem: null }] : [];
+  });
+  return [...rows.filter(({ row }) => row.problem !== null).map(({ row }) => row), ...singles, ...rows.filter(({ isSingle, row }) => !isSingle && row.problem === null).map(({ row }) => row)];
+}
+
+function shownInKey(spec: PlaySpec, key: string, turn: number, chordStyle: ChordStyle): Shown {
+  try {
+    return { label: drawnLabel(spec, { key, turn }, chordStyle), asks: asksOf(spec, { key, turn }), problem: null };
+  } catch {
+    return { label: printedNote(key), asks: null, problem: 'This does not fit its place on the keyboard in this key. Widen the place.' };
+  }
 }
