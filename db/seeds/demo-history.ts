@@ -2,8 +2,9 @@ import type { House } from './demo-types';
 import { layLadder } from './demo-ladder';
 import { layPayments, layPrices, layTuitionRun } from './demo-money';
 import { layPayRuns, layRates } from './demo-pay';
+import { layPractice } from './demo-practice';
 
-/** Bills, payments, pay and the ladder of the past two terms, made by the same operations as the screens use. */
+/** Bills, payments, pay, the ladder and the practice of the past two terms, made by the same operations as the screens use. */
 export async function layHistory(house: House): Promise<void> {
   await layPrices(house);
   await layTuitionRun(house, house.terms.last, { instalments: 1 });
@@ -13,4 +14,5 @@ export async function layHistory(house: House): Promise<void> {
   await layRates(house);
   await layPayRuns(house);
   await layLadder(house);
+  await layPractice(house);
 }
