@@ -14,6 +14,7 @@ import { finishPractice } from './finish-practice';
 import { itHurts } from './it-hurts';
 import { practiceToday, type PracticePiece } from './practice-today';
 import { setPractice } from './set-practice';
+import { studentStanding } from './student-standing';
 
 const DAY = 86_400;
 const ines = (db: Knex, now = NOW) => contextOf(db, 'student', { personId: 'ines', studentIds: ['ines'], now });
@@ -140,6 +141,22 @@ it('"this hurts" tells the teacher and the guardian who may know, and keeps the 
   expect(mails.map(({ recipientId }) => recipientId)).toEqual(['ada', 'greta']);
   expect(mails[0]?.bodyText).toContain('left wrist');
   expect(await db('practice_log')).toMatchObject([{ minutes: 9, feeling: 'hard', note: 'Stopped: it hurt (left wrist).' }]);
+});
+
+describe('what the teacher sees of a student', () => {
+  it('ladder, what is set, minutes, failed reviews and pain; the desk and strangers see none of it', async () => {
+    const { db, rungId } = await house();
+    await setPractice({ studentId: 'ines', dueOn: '2026-11-24', items: [{ rungId: rungId('2.2'), piece: '', keys: ['Gb'], beatsPerMinute: null, minutes: 10, howRight: '' }] }, greta(db));
+    await finishPractice(finishing({}), ines(db));
+    await finishPractice(finishing({}), ines(db, NOW + DAY));
+    await itHurts({ studentId: 'ines', minutes: 3, where: '' }, ines(db, NOW + DAY));
+    const seen = await studentStanding('ines', greta(db, NOW + DAY));
+    expect(seen?.practice).toEqual({ set: { by: 'Greta Dahl', dueOn: '2026-11-24', items: ['2.2 Six kinds of shell in twelve keys, Gb'] }, minutes: 15, weak: ['1.2 Shells 1-3-7 and 1-7-3'], hurts: [{ on: '2026-11-18', note: 'Stopped: it hurt.' }] });
+    expect(seen).toMatchObject({ mayHear: true, maySet: true, hearings: [] });
+    expect(seen?.ladder.passedCount).toBe(6);
+    expect((await studentStanding('ines', contextOf(db, 'owner')))?.maySet).toBe(false);
+    for (const other of [contextOf(db, 'desk'), contextOf(db, 'guardian', { studentIds: ['ines'] }), contextOf(db, 'teacher', { personId: 'otto' })]) expect(await studentStanding('ines', other)).toBeNull();
+  });
 });
 
 /** Greta teaches Inés; she has an address, so that mails to her can leave. */

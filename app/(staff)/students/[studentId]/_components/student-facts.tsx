@@ -2,6 +2,7 @@ import Link from 'next/link';
 import { Sheet } from '@/components/ui/sheet';
 import { weeklyWords } from '@/lib/calendar/weekday-words';
 import { formatDate } from '@/lib/format';
+import { reachWords } from '@/lib/harmony/hands';
 import type { StudentScreen } from '@/lib/people/server/read-students';
 
 export function StudentFacts({ student, locale }: { student: StudentScreen; locale: string }) {
@@ -31,7 +32,7 @@ export function StudentFacts({ student, locale }: { student: StudentScreen; loca
           <ul>{student.credits.map(({ id, minutes, lastOn }) => <li key={id} className="num">{minutes} minutes, to be used by {formatDate(lastOn, locale, 'plain')}</li>)}</ul>
         </Sheet>
       ) : null}
-      <Sheet eyebrow="Hands"><p className="text-ink-2">Reach of one hand: {student.reachSemitones} semitones. Wider voicings are split between the hands or left out.</p></Sheet>
+      <Sheet eyebrow="Hands"><p className="text-ink-2">{`One hand reaches ${reachWords(student.reachSemitones)} in comfort. Wider voicings are split between the hands or rolled.`}</p></Sheet>
     </div>
   );
 }
