@@ -37,3 +37,7 @@ export const decideHearingSchema = z.object({
 });
 
 export const stopHearingSchema = z.object({ hearingId: id, reason: words(300).min(3, 'Say why in a few words.') });
+
+export const undoHearingSchema = z.object({ hearingId: id });
+
+export const askRecheckSchema = z.object({ studentId: id, rungId: id, reason: words(500).min(3, 'Say why in a few words.') });
