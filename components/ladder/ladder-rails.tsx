@@ -5,7 +5,7 @@ import { RungBar } from './rung-bar';
 
 type LadderRailsProps = {
   rungs: readonly LadderRung[]; next: readonly string[]; locale: string;
-  /** Family and student read the plain names; staff the trade's. */
+  /** Family and student read the plain words first and the trade’s name small beneath; staff the trade’s name. */
   isPlain?: boolean;
   heardNow?: string | null;
   chosen?: string | null;
@@ -25,12 +25,22 @@ export function LadderRails({ rungs, next, locale, isPlain = false, heardNow = n
             <RungBar state={isHeardNow ? 'hearing' : rung.state} />
             <div className="py-2 pr-1">
               {hrefOf ? <Link href={hrefOf(rung.id)} scroll={false} aria-current={rung.id === chosen ? 'true' : undefined} className={`font-bold leading-snug no-underline hover:underline ${tone}`}>{name}</Link> : <p className={`font-bold leading-snug ${tone}`}>{name}</p>}
+              {isPlain ? <PlainWords rung={rung} /> : null}
               <p className="text-small text-ink-3">{rungLine(isPlain ? plainMissing(rung) : rung, { isNext: rung.id === next[0], isHeardNow, locale })}</p>
             </div>
           </li>
         );
       })}
     </ol>
+  );
+}
+
+function PlainWords({ rung: { canDo, title } }: { rung: LadderRung }) {
+  return (
+    <>
+      <p className="text-small text-ink-2">{`${canDo.charAt(0).toUpperCase()}${canDo.slice(1)}.`}</p>
+      <p className="text-[12.5px] text-ink-3">{`Musicians say: ${title}`}</p>
+    </>
   );
 }
 
