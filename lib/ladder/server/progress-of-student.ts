@@ -37,9 +37,9 @@ export async function wordsOf({ rungs, standing }: Standing, ladder: StudentLadd
   const texts = new Map(rungs.map((rung) => [rung.id, rung]));
   const passed = standing.flatMap(({ rung, state, since }) => {
     const text = texts.get(rung);
-    return text && since && hasRung(state) ? [{ ...text, on: since, isHeard: state !== 'credited' }] : [];
+    return text && since && hasRung(state) ? [{ ...text, on: since, isHeard: state === 'passed', isToRecheck: state === 'recheck_due' }] : [];
   });
-  // The pace counts what was heard, not what was credited on one day.
+  // The pace counts what was heard, not what was credited on one day or is in doubt since another.
   const passDates = passed.filter(({ isHeard }) => isHeard).map(({ on }) => on);
   return progressWords({
     name: ladder.student.firstName, isReader, passed, rungCount: ladder.rungCount, next: texts.get(ladder.next[0] ?? '') ?? null, today, locale: school.locale,

@@ -63,6 +63,7 @@ describe('asking for a re-check', () => {
     const standing = await studentStanding('ines', greta(db, NOW + DAY));
     expect(standing?.rechecks).toEqual([{ rungId: rungId('4.2'), code: '4.2', title: 'Minor fourth stack', reason: 'The bass note was missing on the clip.', by: 'Leif Dahl', on: '2026-11-18' }]);
     expect(standing?.ladder.passedCount).toBe(9);
+    expect(standing?.words).toMatchObject({ count: '9 of 37 rungs passed.', now: expect.not.stringContaining('fourths') as string });
     expect(standing?.passed.find(({ code }) => code === '4.2')).toMatchObject({ isToRecheck: true, how: 'heard by Greta Dahl' });
     expect(await db('student_rung').where({ rungId: rungId('4.2') })).toMatchObject([{ state: 'recheck_due' }]);
     const { hearingId } = await startHearing({ studentId: 'ines', rungId: rungId('4.2'), leadReason: '' }, greta(db, NOW + 2 * DAY));

@@ -16,7 +16,7 @@ export function Contacts({ student: { family, contacts } }: { student: StudentSc
         {(contacts ?? []).map(({ personId, name, relation, phone, email }) => (
           <li key={personId} className="min-w-0">
             <p><b>{name}</b> <span className="text-ink-3">{RELATIONS[relation]}</span></p>
-            {phone ? <ContactLink href={`tel:${phone.replace(/[^+\d]/g, '')}`} icon={<Phone size={15} aria-hidden />}>{phone}</ContactLink> : <p className="text-small text-ink-3">No number on record.</p>}
+            {phone ? <ContactLink href={`tel:${phone.replace(/[^+\d]/g, '')}`} icon={<Phone size={15} aria-hidden />}>{phone}</ContactLink> : relation === 'self' ? null : <p className="text-small text-ink-3">No number on record.</p>}
             {email ? <ContactLink href={`mailto:${email}`} icon={<Mail size={15} aria-hidden />}>{email}</ContactLink> : null}
           </li>
         ))}

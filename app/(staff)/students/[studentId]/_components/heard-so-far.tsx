@@ -29,5 +29,5 @@ export function HeardSoFar({ hearings, locale }: { hearings: readonly HeardRung[
   );
 }
 
-const keysLine = (heard: readonly string[], missed: readonly string[]): string =>
-  [heard.length > 0 ? `Heard: ${heard.join(', ')}.` : '', missed.length > 0 ? `Not heard: ${missed.join(', ')}.` : ''].filter(Boolean).join(' ');
+const keysLine = (heard: readonly string[], missed: readonly string[]): string => (heard.length === 0 ? `No key heard of ${missed.length} asked.` :
+  [`Heard: ${heard.join(', ')}.`, missed.length > 0 ? `Not heard: ${missed.join(', ')}.` : ''].filter(Boolean).join(' '));

@@ -1,6 +1,6 @@
 import { ChevronDown } from 'lucide-react';
 import { Sheet } from '@/components/ui/sheet';
-import { formatDate, plural } from '@/lib/format';
+import { formatDate } from '@/lib/format';
 import type { PassedRung } from '@/lib/ladder/server/student-standing';
 import { AskRecheck } from './ask-recheck';
 
@@ -16,7 +16,7 @@ export function PassedRungs({ passed, ...row }: PassedProps) {
       {passed.length === 0 ? <p className="px-4 pb-4 text-ink-3">None yet.</p> : <ul>{latest.map((rung) => <PassedRow key={rung.id} rung={rung} {...row} />)}</ul>}
       {older.length > 0 ? (
         <details className="group border-t border-rule">
-          <summary className="flex list-none items-center gap-2 px-4 py-3 font-semibold text-petrol tap [&::-webkit-details-marker]:hidden">{plural(older.length, 'more rung')}<ChevronDown size={16} aria-hidden className="group-open:rotate-180" /></summary>
+          <summary className="flex list-none items-center gap-2 px-4 py-3 font-semibold text-petrol tap [&::-webkit-details-marker]:hidden">{`${older.length} more`}<ChevronDown size={16} aria-hidden className="group-open:rotate-180" /></summary>
           <ul>{older.map((rung) => <PassedRow key={rung.id} rung={rung} {...row} />)}</ul>
         </details>
       ) : null}

@@ -13,7 +13,7 @@ export function Progress({ standing, locale }: { standing: StudentStanding | nul
   return (
     <>
       <WhereTheyStand standing={standing} locale={locale} />
-      <Sheet title="Ladder"><StudentLadder ladder={ladder} locale={locale} {...(may.hear ? { hrefOf } : {})} /></Sheet>
+      <Sheet title="The whole ladder"><StudentLadder ladder={ladder} locale={locale} {...(may.hear ? { hrefOf } : {})} /></Sheet>
       <HeardSoFar hearings={hearings} locale={locale} />
       <PassedRungs passed={passed} studentId={ladder.student.id} mayAskRecheck={may.askRecheck} locale={locale} />
     </>
