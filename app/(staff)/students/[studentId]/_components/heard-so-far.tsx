@@ -29,5 +29,7 @@ export function HeardSoFar({ hearings, locale }: { hearings: readonly HeardRung[
   );
 }
 
-const keysLine = (heard: readonly string[], missed: readonly string[]): string => (heard.length === 0 ? `No key heard of ${missed.length} asked.` :
-  [`Heard: ${heard.join(', ')}.`, missed.length > 0 ? `Not heard: ${missed.join(', ')}.` : ''].filter(Boolean).join(' '));
+function keysLine(heard: readonly string[], missed: readonly string[]): string {
+  if (heard.length === 0) return `No key heard of ${missed.length} asked.`;
+  return missed.length === 0 ? `Heard: ${heard.join(', ')}.` : `Heard: ${heard.join(', ')}. Not heard: ${missed.join(', ')}.`;
+}
