@@ -24,6 +24,9 @@ export async function findHearing(db: Db, id: string): Promise<Hearing | undefin
   return row && toHearing(row);
 }
 
+/** A decision that was taken back stays in the table and counts for nothing: another hearing follows it. */
+const COUNTS = 'NOT EXISTS (SELECT 1 FROM hearing n WHERE n.replaces_id = h.id)';
+
 const UNDER_WAY: HearingState[] = ['planned', 'keys_drawn', 'played'];
 
 export async function hearingUnderWay(db: Db, studentId: string, rungId: string): Promise<Hearing | undefined> {
@@ -31,11 +34,11 @@ export async function hearingUnderWay(db: Db, studentId: string, rungId: string)
   return row && toHearing(row);
 }
 
-/** All hearings of a student, newest first; stopped ones count for nothing and are left out. */
+/** All hearings of a student, newest first; those stopped or taken back count for nothing and are left out. */
 export const hearingsOf = async (db: Db, studentId: string): Promise<Hearing[]> =>
-  (await rows(db).where('h.studentId', studentId).whereNot('h.state', 'stopped').orderBy('h.createdAt', 'desc')).map(toHearing);
+  (await rows(db).where('h.studentId', studentId).whereNot('h.state', 'stopped').whereRaw(COUNTS).orderBy('h.createdAt', 'desc')).map(toHearing);
 
-type NewHearing = Pick<Hearing, 'id' | 'studentId' | 'rungId' | 'editionId' | 'occurrenceId' | 'termId' | 'assessorId' | 'startedOn' | 'createdAt'> & { seed: number; drawn: DrawnKey[] };
+type NewHearing = Pick<Hearing, 'id' | 'studentId' | 'rungId' | 'editionId' | 'occurrenceId' | 'termId' | 'assessorId' | 'startedOn' | 'createdAt'> & { seed: number; drawn: DrawnKey[]; replacesId?: string };
 export async function insertHearing(trx: Trx, { drawn, ...hearing }: NewHearing): Promise<void> {
   await trx('hearing').insert({ ...hearing, state: 'keys_drawn', keysDrawnJson: JSON.stringify(drawn) });
 }
@@ -71,9 +74,20 @@ export const lastTries = (proofs: readonly Proof[]): Map<number, Proof> => new M
 export const countByEar = (proofs: readonly Proof[]): number => [...lastTries(proofs).values()].filter(({ isHeard, source }) => isHeard && source === 'ear').length;
 export const countHeard = (proofs: readonly Proof[]): number => [...lastTries(proofs).values()].filter(({ isHeard }) => isHeard).length;
 
+/** Of each of these hearings the places of the drawn keys that were heard; of several tries the last one counts. */
+export async function keysHeardIn(db: Db, hearingIds: readonly string[]): Promise<Map<string, Set<number>>> {
+  const tries: { hearingId: string; drawnNo: number; isHeard: number }[] = await db('proof').whereIn('hearingId', [...hearingIds]).orderBy('tryNo').select('hearingId', 'drawnNo', 'isHeard');
+  const heard = new Map<string, Set<number>>(hearingIds.map((id) => [id, new Set<number>()]));
+  for (const { hearingId, drawnNo, isHeard } of tries) {
+    if (isHeard === 1) heard.get(hearingId)?.add(drawnNo);
+    else heard.get(hearingId)?.delete(drawnNo);
+  }
+  return heard;
+}
+
 /** How each key went at this rung before, for the weight of the next draw. */
 export async function keyRecords(db: Db, studentId: string, rungId: string): Promise<KeyRecord[]> {
-  const proofs = await db('proof as f').join('hearing as h', 'h.id', 'f.hearingId').where({ 'h.studentId': studentId, 'h.rungId': rungId })
+  const proofs = await db('proof as f').join('hearing as h', 'h.id', 'f.hearingId').where({ 'h.studentId': studentId, 'h.rungId': rungId }).whereRaw(COUNTS)
     .select<{ drawnNo: number; isHeard: number; keysDrawnJson: string }[]>('f.drawnNo', 'f.isHeard', 'h.keysDrawnJson');
   const records = new Map<string, KeyRecord>();
   for (const { drawnNo, isHeard, keysDrawnJson } of proofs) {
@@ -86,13 +100,13 @@ export async function keyRecords(db: Db, studentId: string, rungId: string): Pro
 }
 
 export async function countAttempts(db: Db, studentId: string, rungId: string, term: { startsOn: LocalDate; endsOn: LocalDate }): Promise<number> {
-  const [row] = await db('hearing').where({ studentId, rungId, state: 'decided' })
+  const [row] = await db('hearing as h').where({ studentId, rungId, state: 'decided' }).whereRaw(COUNTS)
     .whereBetween('decidedOn', [term.startsOn, term.endsOn]).count<{ count: number }[]>('* as count');
   return row?.count ?? 0;
 }
 
 export async function lastNotYetOn(db: Db, studentId: string, rungId: string): Promise<LocalDate | null> {
-  const row = await db('hearing').where({ studentId, rungId, state: 'decided' }).orderBy('decidedAt', 'desc')
+  const row = await db('hearing as h').where({ studentId, rungId, state: 'decided' }).whereRaw(COUNTS).orderBy('decidedAt', 'desc')
     .first<{ decidedOn: LocalDate; outcome: Outcome } | undefined>('decidedOn', 'outcome');
   return row?.outcome === 'not_yet' ? row.decidedOn : null;
 }

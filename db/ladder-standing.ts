@@ -8,8 +8,8 @@ type Dated = { rung: string; at: EpochSeconds; on: LocalDate };
 
 /** Everything from which a student's standing follows. */
 async function rungFactsOf(db: Db, studentId: string): Promise<RungFact[]> {
-  const hearings: HearingRow[] = await db('hearing').where({ studentId }).whereNot('state', 'stopped')
-    .select('id', 'rungId as rung', 'outcome', 'decidedAt', 'decidedOn', 'createdAt', 'startedOn');
+  const hearings: HearingRow[] = await db('hearing as h').where({ studentId }).whereNot('state', 'stopped')
+    .whereRaw('NOT EXISTS (SELECT 1 FROM hearing n WHERE n.replaces_id = h.id)').select('id', 'rungId as rung', 'outcome', 'decidedAt', 'decidedOn', 'createdAt', 'startedOn');
   const credits: Dated[] = await db('rung_credit').where({ studentId }).select('rungId as rung', 'at', 'creditedOn as on');
   const rechecks: Dated[] = await db('recheck_request').where({ studentId }).select('rungId as rung', 'at', 'askedOn as on');
   return [

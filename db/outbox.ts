@@ -12,7 +12,7 @@ export type OutboxRow = {
 };
 
 type NewMail = Pick<OutboxRow, 'id' | 'key' | 'topic' | 'subjectRef' | 'recipientId' | 'toName' | 'toAddress' | 'subject' | 'bodyText'> & {
-  language?: string; bodyHtml?: string; attachments?: MailAttachment[]; createdAt: EpochSeconds;
+  language?: string; bodyHtml?: string; attachments?: MailAttachment[]; createdAt: EpochSeconds; nextTryAt?: EpochSeconds;
 };
 
 /** Adds a mail once: a second one with the same key changes nothing. Answers whether it was new. */
@@ -21,6 +21,9 @@ export async function insertMail(db: Db, { attachments = [], ...mail }: NewMail)
     .onConflict('key').ignore().returning('id');
   return rows.length > 0;
 }
+
+/** Takes back what has not gone out yet about one matter; answers how many. A mail on its way is not stopped. */
+export const withdrawMails = (db: Db, subjectRef: string): Promise<number> => db('outbox').where({ subjectRef, state: 'queued' }).update({ state: 'withdrawn' });
 
 export const MAX_TRIES = 6;
 const LEASE_SECONDS = 120;

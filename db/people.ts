@@ -25,6 +25,10 @@ export async function findPeople(db: Db, ids: readonly string[]): Promise<Person
   return rows.map(toPerson);
 }
 
+export async function setReach(trx: Trx, id: string, reachSemitones: number): Promise<void> {
+  await trx('person').where({ id }).update({ reachSemitones }).increment('rowVersion', 1);
+}
+
 /** "Wren Adair"; the name a person is called by stands before the given one. */
 export const fullName = ({ givenName, calledName, familyName }: Pick<Person, 'givenName' | 'calledName' | 'familyName'>): string =>
   `${calledName ?? givenName} ${familyName}`.trim();

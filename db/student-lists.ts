@@ -19,14 +19,14 @@ export const listStudents = (db: Db, ability: AppAbility): Promise<StudentListRo
       db.raw("trim(coalesce(p.called_name, p.given_name) || ' ' || p.family_name) AS name"), db.raw("trim(t.given_name || ' ' || t.family_name) AS teacher_name"), db.raw('coalesce(e.enrolments, 0) AS enrolments'))
     .groupBy('p.id').orderBy(['p.familyName', 'p.givenName']);
 
-export type UpcomingLesson = { id: string; seatId: string; studentId: string; studentName: string; localDate: LocalDate; startMin: number; lengthMinutes: number; startsAt: number; roomName: string | null; siteName: string; teacherName: string | null; lessonTypeLabel: string; attendance: string; cancelDeadlineAt: number | null; rowVersion: number };
+export type UpcomingLesson = { id: string; seatId: string; studentId: string; studentName: string; localDate: LocalDate; startMin: number; lengthMinutes: number; startsAt: number; roomName: string | null; siteName: string; teacherId: string | null; teacherName: string | null; lessonTypeLabel: string; attendance: string; cancelDeadlineAt: number | null; rowVersion: number };
 
 /** Lessons of these students between two days, soonest first. */
 export const lessonsOfStudents = (db: Db, studentIds: readonly string[], span: { from: LocalDate; until: LocalDate }): Promise<UpcomingLesson[]> =>
   db('seat as s').join('occurrence as o', 'o.id', 's.occurrenceId').join('lesson_type as t', 't.id', 'o.lessonTypeId').join('site as w', 'w.id', 'o.siteId').join('person as x', 'x.id', 's.studentId')
     .leftJoin('room as r', 'r.id', 'o.roomId').leftJoin('person as p', db.raw('p.id = coalesce(o.taught_by_id, o.planned_teacher_id)'))
     .whereIn('s.studentId', [...studentIds]).whereBetween('o.localDate', [span.from, span.until]).whereNotIn('o.state', ['cancelled', 'moved'])
-    .select<UpcomingLesson[]>('o.id', 's.id as seatId', 's.studentId', 'o.localDate', 'o.startMin', 'o.lengthMinutes', 'o.startsAt', 'o.cancelDeadlineAt', 's.attendance', 's.rowVersion', 'r.name as roomName', 'w.name as siteName', 't.label as lessonTypeLabel',
+    .select<UpcomingLesson[]>('o.id', 's.id as seatId', 's.studentId', 'o.localDate', 'o.startMin', 'o.lengthMinutes', 'o.startsAt', 'o.cancelDeadlineAt', 's.attendance', 's.rowVersion', 'r.name as roomName', 'w.name as siteName', 't.label as lessonTypeLabel', 'p.id as teacherId',
       db.raw("trim(p.given_name || ' ' || p.family_name) AS teacher_name"), db.raw("coalesce(x.called_name, x.given_name) AS student_name"))
     .orderBy('o.startsAt');
 

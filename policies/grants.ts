@@ -6,7 +6,7 @@ type Grant = (actor: Actor, allow: Allow) => void;
 const OWNER_MANAGES: SubjectName[] = [
   'Account', 'Attendance', 'BusyTime', 'Consent', 'Contact', 'Enquiry', 'Enrolment', 'Excuse', 'Family', 'HealthNote', 'Import',
   'Incident', 'Invoice', 'InvoiceShare', 'Ladder', 'LessonNote', 'Occurrence', 'Payment', 'PayLine', 'PayRun', 'Price', 'Rate',
-  'Recital', 'Refund', 'Report', 'Room', 'Scholarship', 'Seat', 'Settings', 'Student', 'Term', 'TuitionRun',
+  'Reach', 'Recheck', 'Recital', 'Refund', 'Report', 'Room', 'Scholarship', 'Seat', 'Settings', 'Student', 'Term', 'TuitionRun',
 ];
 
 const DESK_MANAGES: SubjectName[] = [
@@ -41,6 +41,8 @@ const grants: Record<Role, Grant> = {
     // The private note of a hearing and its keys are for those who teach: families read the result in plain words.
     allow('read', ['Progress', 'Hearing', 'HearingNote', 'Practice', 'HealthNote'], taught);
     allow('read', 'Student', { id: { $in: [...actor.taughtStudentIds] } });
+    // A hand is measured by whoever sits beside it.
+    allow(['read', 'update'], 'Reach', taught);
     allow(['read', 'create', 'update'], ['LessonNote', 'Report'], taught);
     allow('create', 'Practice', taught);
     allow(['create', 'update'], 'Hearing', { ...taught, assessorId: actor.personId });
@@ -74,11 +76,13 @@ const grants: Record<Role, Grant> = {
   },
 };
 
-/** The lead keeps one standard: sees every student's ladder, agrees to skips and further attempts, looks after the rungs. */
+/** The lead keeps one standard: sees every student's ladder, agrees to skips and further attempts, asks for a re-check, looks after the rungs. */
 function grantLead(actor: Actor, allow: Allow): void {
   allow('read', ['Progress', 'Hearing', 'HearingNote', 'Student', 'Occurrence', 'Seat', 'Practice']);
   allow(['create', 'update'], 'Hearing', { assessorId: actor.personId });
   allow('approve', ['Hearing', 'Report']);
+  allow(['read', 'update'], 'Reach');
+  allow(['read', 'create'], 'Recheck');
   allow('read', 'Report');
   allow(['read', 'update'], 'Ladder');
 }

@@ -19,6 +19,7 @@ import { takeEnquiry } from '@/lib/calendar/server/take-enquiry';
 import { deskEnquirySchema } from '@/lib/calendar/schema';
 import { importList } from '@/lib/imports/server/import-screen';
 import { agreeHearing } from '@/lib/ladder/server/agree-hearing';
+import { askForRecheck } from '@/lib/ladder/server/ask-recheck';
 import { hearingScreen } from '@/lib/ladder/server/hearing-screen';
 import { installLadder } from '@/lib/ladder/server/install-ladder';
 import { ladderOfStudent } from '@/lib/ladder/server/ladder-of-student';
@@ -30,6 +31,7 @@ import { payRunScreen } from '@/lib/payroll/server/pay-run-screen';
 import { payWorkbook } from '@/lib/payroll/server/pay-workbook';
 import { teacherPay } from '@/lib/payroll/server/teacher-pay';
 import { readAccess } from '@/lib/people/server/access';
+import { changeReach } from '@/lib/people/server/change-reach';
 import { changeHouseRule, readHouseRules } from '@/lib/people/server/house-rules';
 import { invitePerson } from '@/lib/people/server/invite-person';
 import { readFamily } from '@/lib/people/server/read-families';
@@ -104,7 +106,7 @@ const ATTEMPTS: Record<RowName, Partial<Record<Verb, Attempt>>> = {
   arrival: { write: async (context, { seatToday }) => { await checkIn({ seatId: seatToday, hasArrived: true }, context); return true; } },
   excuse: { write: mark('excused') },
   student: { read: (context, { studentId }) => readStudent({ id: studentId }, context) },
-  contacts: { read: async (context, { studentId, familyId }) => ((await readStudent({ id: studentId }, context))?.guardianLine ?? null) ?? readFamily({ id: familyId }, context) },
+  contacts: { read: async (context, { studentId, familyId }) => ((await readStudent({ id: studentId }, context))?.contacts ?? null) ?? readFamily({ id: familyId }, context) },
   enquiries: {
     read: always(readEnquiries),
     write: always((context) => takeEnquiry(deskEnquirySchema.parse({ contactName: 'Wren', contactEmail: 'wren@example.com', contactPhone: '', studentName: 'Wren', source: 'phone', wishes: [{ weekday: 2, fromMin: 900, toMin: 1080 }] }), context)),
@@ -137,6 +139,13 @@ const ATTEMPTS: Record<RowName, Partial<Record<Verb, Attempt>>> = {
     write: (context, { studentId }) => startHearing({ studentId, rungId: made.rungId, leadReason: '' }, context),
     approve: (context, { studentId }) => agreeHearing({ studentId, rungId: made.rungId, reason: 'Moves away in a week' }, context),
   },
+  recheck: {
+    write: async (context, { studentId }) => {
+      await context.db('rung_credit').insert({ id: randomUUID(), studentId, rungId: made.rungId, cause: 'placement', reason: 'Placed', byId: 'ruth', creditedOn: '2026-09-07', at: 1 });
+      return askForRecheck({ studentId, rungId: made.rungId, reason: 'Standards meeting' }, context);
+    },
+  },
+  reach: { write: (context, { studentId }) => changeReach({ studentId, reachSemitones: 9 }, context) },
   ladder: { read: schoolLadder, approve: always((context) => installLadder({}, context)) },
   accounts: { read: always(readAccess), write: always((context) => invitePerson({ personId: 'viktor', email: 'viktor@example.org', role: 'teacher' }, context)) },
   exports: { export: takesEveryList },

@@ -67,6 +67,11 @@ export const MATRIX = {
     thing: 'Hearing of a rung, with its keys and the private note', tries: ['read', 'write', 'approve'],
     cells: { ...NOBODY, owner: readAll, teacher: readAndWriteOwn, substitute: readAndWriteOwn, lead: [...readAndWriteAll, 'approve all'] },
   },
+  recheck: { thing: 'Asking that a passed rung be heard once more', tries: ['write'], cells: { ...NOBODY, owner: writeAll, lead: writeAll } },
+  reach: {
+    thing: 'How far a student’s hand reaches', tries: ['write'],
+    cells: { ...NOBODY, owner: writeAll, teacher: writeOwn, substitute: writeOwn, lead: writeAll },
+  },
   ladder: {
     thing: 'Ladder edition', tries: ['read', 'approve'],
     cells: { owner: ['read all', 'approve all'], desk: readAll, teacher: readAll, substitute: readAll, lead: readAll, student: readAll, guardian: readAll },

@@ -23,7 +23,7 @@ export type Action = 'read' | 'create' | 'update' | 'approve' | 'manage' | 'expo
 export const SUBJECTS = [
   'Account', 'Attendance', 'Audit', 'BusyTime', 'Consent', 'Contact', 'Enquiry', 'Enrolment', 'Excuse', 'Family', 'HealthNote',
   'Hearing', 'HearingNote', 'Import', 'Incident', 'InvoiceShare', 'Invoice', 'Job', 'Ladder', 'LessonNote', 'Occurrence', 'Payment', 'PayLine',
-  'PayRun', 'Practice', 'Price', 'Progress', 'Rate', 'Recital', 'Refund', 'Report', 'Room', 'Scholarship', 'Seat', 'Settings',
+  'PayRun', 'Practice', 'Price', 'Progress', 'Rate', 'Reach', 'Recheck', 'Recital', 'Refund', 'Report', 'Room', 'Scholarship', 'Seat', 'Settings',
   'Student', 'Term', 'TuitionRun',
 ] as const;
 export type SubjectName = (typeof SUBJECTS)[number];

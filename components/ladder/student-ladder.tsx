@@ -19,6 +19,7 @@ export function StudentLadder({ ladder, locale, isPlain = false, hrefOf }: Stude
               <span className="min-w-0">
                 <span className="eyebrow block">{`Level ${level.no}`}</span>
                 <span className="font-semibold">{isPlain ? level.plainTitle : level.title}</span>
+                {isPlain ? <span className="block text-[12.5px] text-ink-3">{level.title}</span> : null}
               </span>
               <span className="flex items-center gap-2 whitespace-nowrap text-small text-ink-3">
                 {levelLine(level)}

@@ -62,7 +62,7 @@ CREATE TABLE person (
   pronouns TEXT,
   is_student INTEGER NOT NULL DEFAULT 0 CHECK (is_student IN (0, 1)),
   -- Largest comfortable reach of one hand in semitones; a voicing wider than this is split or re-spread.
-  reach_semitones INTEGER NOT NULL DEFAULT 12 CHECK (reach_semitones BETWEEN 7 AND 20),
+  reach_semitones INTEGER NOT NULL DEFAULT 12 CHECK (reach_semitones BETWEEN 5 AND 20),
   state TEXT NOT NULL DEFAULT 'live' CHECK (state IN ('live', 'archived', 'erased')),
   erased_code TEXT,
   external_key TEXT UNIQUE,

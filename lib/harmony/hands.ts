@@ -53,8 +53,3 @@ export function handsSentence({ span, left, right, leftSpan, rightSpan, advice }
   const said = { fits: '', drop_fifth: ' For this reach the 5th may be left out.', roll: ' For this reach it is rolled from the bottom up; rolled counts.' };
   return `${wide}${said[advice]} Stop if a stretch hurts; re-spread the voicing instead.`;
 }
-
-const REACHES: Record<number, string> = { 5: 'a fourth', 6: 'a tritone', 7: 'a fifth', 8: 'a minor sixth', 9: 'a sixth', 10: 'a minor seventh', 11: 'a major seventh', 12: 'an octave', 13: 'a minor ninth', 14: 'a ninth', 15: 'a minor tenth', 16: 'a tenth', 17: 'an eleventh', 18: 'an augmented eleventh', 19: 'a twelfth' };
-
-/** The reach of a hand as the interval from thumb to little finger: 12 is an octave, 16 a tenth. */
-export const reachWords = (semitones: number): string => REACHES[semitones] ?? plural(semitones, 'half step');

@@ -5,7 +5,8 @@ import type { Criteria } from './play-spec';
 
 /**
  * A hearing: planned (may begin) → keys_drawn (the seed is stored) → played (a proof is in) → decided. Stopped
- * for illness, distress or a broken instrument it counts as no attempt. Decided is for good.
+ * for illness, distress or a broken instrument it counts as no attempt. Decided is for good: within ten minutes
+ * another hearing may follow it and count in its place (undo.ts), later a re-check.
  */
 export type HearingState = 'planned' | 'keys_drawn' | 'played' | 'decided' | 'stopped';
 export type Outcome = 'passed' | 'not_yet';

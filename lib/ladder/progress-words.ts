@@ -8,7 +8,7 @@ export type ProgressFacts = {
   /** As the reader says it: a first name, or "you". */
   name: string;
   isReader: boolean;
-  passed: readonly (PlainRung & { on: LocalDate })[];
+  passed: readonly (PlainRung & { on: LocalDate; /** in doubt: counted as passed, not told as the latest thing one can do */ isToRecheck?: boolean })[];
   rungCount: number;
   next: PlainRung | null;
   projection: Projection | null;
@@ -24,7 +24,7 @@ const inSentence = (plainTitle: string): string => plainTitle.charAt(0).toLowerC
 /** How far a student is, in words that need no music theory. Dates come only from the student's own pace. */
 export function progressWords({ name, isReader, passed, rungCount, next, projection, today, locale }: ProgressFacts): ProgressWords {
   const who = isReader ? 'You' : name;
-  const latest = [...passed].sort((a, b) => a.on.localeCompare(b.on)).at(-1);
+  const latest = [...passed].sort((a, b) => Number(b.isToRecheck ?? false) - Number(a.isToRecheck ?? false) || a.on.localeCompare(b.on)).at(-1);
   const have = isReader ? 'have' : 'has';
   return {
     now: latest ? `${who} can now ${latest.canDo}.` : `${who} ${have} begun. The first rung is being prepared.`,

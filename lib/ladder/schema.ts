@@ -38,6 +38,10 @@ export const decideHearingSchema = z.object({
 
 export const stopHearingSchema = z.object({ hearingId: id, reason: words(300).min(3, 'Say why in a few words.') });
 
+export const undoHearingSchema = z.object({ hearingId: id });
+
+export const askRecheckSchema = z.object({ studentId: id, rungId: id, reason: words(500).min(3, 'Say why in a few words.') });
+
 const playedKeySchema = z.object({
   chords: z.array(z.object({ played: z.array(z.number().int()).max(24, 'Too many keys at once.').default([]), byEar: z.enum(['right', 'not_right']).nullable().default(null) })).max(24),
 });

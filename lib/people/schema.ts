@@ -1,4 +1,5 @@
 import * as z from 'zod';
+import { LEAST_REACH, MOST_REACH } from '../harmony/reach';
 import { isLocalDate, isZone } from '../time';
 import { passwordFault } from './passwords';
 
@@ -45,4 +46,10 @@ export const backgroundCheckSchema = z.object({
   personIds: z.array(z.string().max(64)).min(1, 'Choose at least one teacher.').max(200),
   issuedOn: day,
   expiresOn: day,
+});
+
+const REACH_RANGE = `From ${LEAST_REACH} to ${MOST_REACH} semitones.`;
+export const changeReachSchema = z.object({
+  studentId: z.string().min(1).max(64),
+  reachSemitones: z.coerce.number<string | number>(REACH_RANGE).int(REACH_RANGE).min(LEAST_REACH, REACH_RANGE).max(MOST_REACH, REACH_RANGE),
 });

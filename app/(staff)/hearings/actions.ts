@@ -1,11 +1,12 @@
 'use server';
 
 import { revalidatePath } from 'next/cache';
-import { agreeHearingSchema, decideHearingSchema, recordProofSchema, startHearingSchema, stopHearingSchema } from '@/lib/ladder/schema';
+import { agreeHearingSchema, decideHearingSchema, recordProofSchema, startHearingSchema, stopHearingSchema, undoHearingSchema } from '@/lib/ladder/schema';
 import { agreeHearing } from '@/lib/ladder/server/agree-hearing';
 import { decideHearing, stopHearing } from '@/lib/ladder/server/decide-hearing';
 import { recordProof } from '@/lib/ladder/server/record-proof';
 import { startHearing } from '@/lib/ladder/server/start-hearing';
+import { undoHearing } from '@/lib/ladder/server/undo-hearing';
 import { action } from '@/lib/server/action';
 
 const refresh = () => revalidatePath('/hearings/[studentId]', 'page');
@@ -34,4 +35,10 @@ export const decide = action(decideHearingSchema, async (input, context) => {
 export const stop = action(stopHearingSchema, async (input, context) => {
   await stopHearing(input, context);
   refresh();
+});
+
+export const undo = action(undoHearingSchema, async (input, context) => {
+  const undone = await undoHearing(input, context);
+  refresh();
+  return undone;
 });

@@ -12,11 +12,14 @@ import type { DrawnKey } from '../asks';
 import type { HeardChord, Outcome, StartProblem } from '../hearing';
 import type { Criteria, PlaySpec } from '../play-spec';
 import type { StudentLadder } from '../student-ladder';
+import { undoSecondsLeft } from '../undo';
 import { readStanding, toLadder, type Standing } from './ladder-of-student';
 import { problemsOf } from './start-hearing';
 
 export type PastHearing = { id: string; outcome: Outcome; on: LocalDate; by: string; keysHeard: number; notePublic: string; notePrivate: string };
 export type HearingUnderWay = { id: string; byId: string; byName: string; isOwn: boolean; drawn: DrawnKey[]; tries: { drawnNo: number; isHeard: boolean; heard: HeardChord[] }[] };
+/** Decided by this teacher a moment ago: it may still be taken back. */
+export type JustDecided = { id: string; title: string; outcome: Outcome; secondsLeft: number };
 export type HearingScreen = {
   ladder: StudentLadder;
   lesson: { id: string; time: string; roomName: string | null } | null;
@@ -27,6 +30,7 @@ export type HearingScreen = {
   may: { hear: boolean; agree: boolean; isQualified: boolean };
   underWay: HearingUnderWay | null;
   past: PastHearing[];
+  justDecided: JustDecided[];
   chordStyle: ChordStyle;
 };
 
@@ -50,6 +54,7 @@ export async function hearingScreen({ studentId, rungId }: { studentId: string; 
     },
     underWay: rung ? await underWayOf(context, studentId, rung) : null,
     past: hearings.filter((hearing) => hearing.rungId === rung?.id).flatMap(toPast),
+    justDecided: justDecided(read, hearings, context),
     chordStyle: school.chordStyle,
   };
 }
@@ -61,6 +66,15 @@ function chosenRung({ rungs }: Standing, { ladder, hearings, wanted, assessorId 
   const open = hearings.find((hearing) => hearing.outcome === null && hearing.assessorId === assessorId)?.rungId;
   const named = rungs.find(({ id }) => id === wanted);
   return named ?? rungs.find(({ id }) => id === open) ?? rungs.find(({ id }) => id === ladder.next[0]) ?? rungs.at(-1);
+}
+
+/** The newest decision on each rung, if it is this teacher's own and its ten minutes are not over. */
+function justDecided({ rungs }: Standing, hearings: readonly Hearing[], { actor, now }: Context): JustDecided[] {
+  return hearings.filter((hearing, at) => hearings.findIndex(({ rungId }) => rungId === hearing.rungId) === at && hearing.assessorId === actor.personId)
+    .flatMap(({ id, rungId, outcome, decidedAt }) => {
+      const secondsLeft = decidedAt === null ? 0 : undoSecondsLeft(decidedAt, now);
+      return outcome && secondsLeft > 0 ? [{ id, outcome, secondsLeft, title: rungs.find((rung) => rung.id === rungId)?.title ?? 'This rung' }] : [];
+    });
 }
 
 const rungOnScreen = ({ id, code, title, canDo, spec, criteria, keysDrawn, keysNeeded, levelNo }: Rung, { standing }: Standing) =>

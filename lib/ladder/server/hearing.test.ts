@@ -6,6 +6,7 @@ import { rebuildStudentRungs } from '@/db/ladder-standing';
 import { firstBrokenAuditRow } from '@/db/audit';
 import { transaction } from '@/db/transaction';
 import { credited, ladderHouse } from '@/tests/factories/ladder-house';
+import { playKey } from '@/tests/factories/played-key';
 import { contextOf, NOW } from '@/tests/support/context';
 import { freshDb } from '@/tests/support/fresh-db';
 import { asksOf } from '../asks';
@@ -36,14 +37,7 @@ async function onLevelFour() {
 type Deciding = Parameters<typeof decideHearing>[0];
 const decision = (over: Pick<Deciding, 'hearingId' | 'outcome'> & Partial<Deciding>): Deciding => ({ passReason: '', notePublic: '', notePrivate: '', marks: [], ...over });
 
-async function play(db: Knex, hearingId: string, drawnNo: number, change: (keys: number[]) => number[] = (keys) => keys) {
-  const hearing = await findHearing(db, hearingId);
-  const rung = hearing && (await findRung(db, hearing.editionId, hearing.rungId));
-  const drawn = hearing?.drawn[drawnNo];
-  if (!rung || !drawn) throw new Error('no such key');
-  const heard = asksOf(rung.spec, drawn).map((ask) => ({ played: change(ask.shown.notes.map(({ key }) => key)), milliseconds: 1400, byEar: null }));
-  return recordProof({ hearingId, drawnNo, source: 'midi', heard }, greta(db));
-}
+const play = (db: Knex, hearingId: string, drawnNo: number, change?: (keys: number[]) => number[]) => playKey(greta(db), hearingId, drawnNo, change);
 
 describe('install', () => {
   it('lays ten levels and 37 rungs once', async () => {

@@ -11,10 +11,11 @@ import { addDays } from '@/lib/time';
 import { asksOf } from '../asks';
 import { firstReview } from '../review';
 import { finishPractice } from './finish-practice';
+import { practiceForStaff } from './practice-for-staff';
 import { itHurts } from './it-hurts';
 import { practiceToday, type PracticePiece } from './practice-today';
 import { setPractice } from './set-practice';
-import { studentStanding } from './student-standing';
+
 
 const DAY = 86_400;
 const ines = (db: Knex, now = NOW) => contextOf(db, 'student', { personId: 'ines', studentIds: ['ines'], now });
@@ -150,12 +151,13 @@ describe('what the teacher sees of a student', () => {
     await finishPractice(finishing({}), ines(db));
     await finishPractice(finishing({}), ines(db, NOW + DAY));
     await itHurts({ studentId: 'ines', minutes: 3, where: '' }, ines(db, NOW + DAY));
-    const seen = await studentStanding('ines', greta(db, NOW + DAY));
-    expect(seen?.practice).toEqual({ set: { by: 'Greta Dahl', dueOn: '2026-11-24', items: ['2.2 Six kinds of shell in twelve keys, Gb'] }, minutes: 15, weak: ['1.2 Shells 1-3-7 and 1-7-3'], hurts: [{ on: '2026-11-18', note: 'Stopped: it hurt.' }] });
-    expect(seen).toMatchObject({ mayHear: true, maySet: true, hearings: [] });
-    expect(seen?.ladder.passedCount).toBe(6);
-    expect((await studentStanding('ines', contextOf(db, 'owner')))?.maySet).toBe(false);
-    for (const other of [contextOf(db, 'desk'), contextOf(db, 'guardian', { studentIds: ['ines'] }), contextOf(db, 'teacher', { personId: 'otto' })]) expect(await studentStanding('ines', other)).toBeNull();
+    const seen = await practiceForStaff('ines', greta(db, NOW + DAY));
+    expect(seen).toMatchObject({
+      set: { by: 'Greta Dahl', dueOn: '2026-11-24', items: ['2.2 Six kinds of shell in twelve keys, Gb'] }, minutes: 15, weak: ['1.2 Shells 1-3-7 and 1-7-3'], hurts: [{ on: '2026-11-18', note: 'Stopped: it hurt.' }],
+      nextRungId: rungId('2.2'), maySet: true,
+    });
+    expect((await practiceForStaff('ines', contextOf(db, 'owner')))?.maySet).toBe(false);
+    for (const other of [contextOf(db, 'desk'), contextOf(db, 'guardian', { studentIds: ['ines'] }), contextOf(db, 'teacher', { personId: 'otto' })]) expect(await practiceForStaff('ines', other)).toBeNull();
   });
 });
 

@@ -1,53 +1,97 @@
 import 'server-only';
-import { hearingsOf } from '@/db/hearings';
-import { cardsOf, itemsOfSet, liveSet, logsSince } from '@/db/practice';
+import { hearingsOf, keysHeardIn, type Hearing } from '@/db/hearings';
+import type { Rung } from '@/db/ladders';
+import { creditsOf, rechecksOf, type AskedRecheck, type RungCredit } from '@/db/rung-history';
+import type { ChordStyle } from '@/lib/harmony/chord-name';
 import type { Context } from '@/lib/server/context';
-import { addDays, type LocalDate } from '@/lib/time';
+import type { LocalDate } from '@/lib/time';
 import { may } from '@/policies/ability';
+import { drawnLabel } from '../asks';
 import type { Outcome } from '../hearing';
-import { tellsTeacher } from '../review';
-import type { StudentLadder } from '../student-ladder';
-import { readStanding, toLadder } from './ladder-of-student';
+import type { ProgressWords } from '../progress-words';
+import { hasRung, type StudentRung } from '../rung-state';
+import { currentLevel, type LadderRung, type StudentLadder } from '../student-ladder';
+import { readStanding, toLadder, type Standing } from './ladder-of-student';
+import { wordsOf } from './progress-of-student';
 
-export type StaffHearing = { id: string; title: string; outcome: Outcome | null; on: LocalDate; by: string; notePublic: string; notePrivate: string };
-export type StaffPractice = {
-  set: { by: string; dueOn: LocalDate; items: string[] } | null;
-  minutes: number;
-  /** Rungs that failed their review twice in a row. */
-  weak: string[];
-  /** What the student wrote when playing hurt, newest first. */
-  hurts: { on: LocalDate; note: string }[];
+export type PassedRung = { id: string; code: string; title: string; on: LocalDate | null; /** "heard by Greta Dahl", or why it was credited */ how: string; isToRecheck: boolean };
+export type HeardRung = {
+  id: string; code: string; title: string; outcome: Outcome; on: LocalDate; by: string;
+  keysHeard: string[]; keysMissed: string[]; notePublic: string; notePrivate: string;
 };
-/** What may be set to practise: the ladder's rungs with the keys each is asked in. */
-export type RungChoice = { id: string; label: string; keyPool: string[]; beatsPerMinute: number | null };
-export type StudentStanding = { ladder: StudentLadder; hearings: StaffHearing[]; practice: StaffPractice; choices: RungChoice[]; mayHear: boolean; maySet: boolean };
+export type OpenRecheck = { rungId: string; code: string; title: string; /** empty where a later hearing, not a request, left it open */ reason: string; by: string | null; on: LocalDate | null };
+export type StudentStanding = {
+  ladder: StudentLadder; words: ProgressWords; level: { no: number; title: string; passed: number; count: number } | null;
+  next: LadderRung[]; passed: PassedRung[]; hearings: HeardRung[]; rechecks: OpenRecheck[];
+  may: { hear: boolean; askRecheck: boolean };
+};
 
-const HEARINGS_SHOWN = 10;
-const DAYS_LOOKED_AT = 14;
-
-/** Where a student stands, for those who teach: ladder, hearings with their private notes, and how the practice goes. Null for who may not see progress. */
+/**
+ * Where a student stands, for staff: level, passed rungs with day and teacher, hearings with their keys, what comes
+ * next and what is to be heard once more. Null for who may not read progress, as the desk, and while there is no
+ * ladder; notes for staff only go to those who may read them.
+ */
 export async function studentStanding(studentId: string, context: Context): Promise<StudentStanding | null> {
   const { db, ability, actor } = context;
-  if (!may(ability, 'read', 'HearingNote', { studentId })) return null;
+  if (!may(ability, 'read', 'Progress', { studentId })) return null;
   const read = await readStanding(studentId, context);
   if (!read) return null;
-  const titles = new Map(read.rungs.map(({ id, code, title }) => [id, `${code} ${title}`]));
-  const hearings = (await hearingsOf(db, studentId)).slice(0, HEARINGS_SHOWN);
+  const ladder = toLadder(read);
+  const hearings = may(ability, 'read', 'Hearing', { studentId }) ? await hearingsOf(db, studentId) : [];
+  const seesNotes = may(ability, 'read', 'HearingNote', { studentId });
   return {
-    ladder: toLadder(read), practice: await practiceFor(studentId, titles, context),
-    hearings: hearings.map(({ id, rungId, outcome, decidedOn, startedOn, assessorName, notePublic, notePrivate }) => ({ id, title: titles.get(rungId) ?? 'a rung of an earlier edition', outcome, on: decidedOn ?? startedOn, by: assessorName, notePublic, notePrivate })),
-    choices: read.rungs.map(({ id, keyPool, criteria }) => ({ id, label: titles.get(id) ?? '', keyPool, beatsPerMinute: criteria.tempo?.beatsPerMinute ?? null })),
-    mayHear: may(ability, 'create', 'Hearing', { studentId, assessorId: actor.personId }), maySet: actor.role === 'teacher' && may(ability, 'create', 'Practice', { studentId }),
+    ladder, words: await wordsOf(read, ladder, { context, isReader: false }), level: levelOf(ladder),
+    next: ladder.next.flatMap((id) => ladder.levels.flatMap(({ rungs }) => rungs.filter((rung) => rung.id === id))),
+    passed: passedRungs(read, hearings, await creditsOf(db, studentId)),
+    hearings: await heardRungs(read, hearings, { context, seesNotes }),
+    rechecks: openRechecks(read, seesNotes ? await rechecksOf(db, studentId) : []),
+    may: { hear: may(ability, 'create', 'Hearing', { studentId, assessorId: actor.personId }), askRecheck: may(ability, 'create', 'Recheck', { studentId }) },
   };
 }
 
-async function practiceFor(studentId: string, titles: ReadonlyMap<string, string>, { db, today }: Pick<Context, 'db' | 'today'>): Promise<StaffPractice> {
-  const [set, cards, logs] = [await liveSet(db, studentId), await cardsOf(db, studentId), await logsSince(db, studentId, addDays(today, 1 - DAYS_LOOKED_AT))];
-  const items = set ? await itemsOfSet(db, set.id) : [];
-  return {
-    set: set ? { by: set.setByName, dueOn: set.dueOn, items: items.map(({ rungId, piece, keys }) => [rungId === null ? '' : (titles.get(rungId) ?? ''), piece ?? '', keys.join(' ')].filter((part) => part !== '').join(', ')) } : null,
-    minutes: logs.reduce((sum, { minutes }) => sum + minutes, 0),
-    weak: cards.filter(tellsTeacher).map(({ rungId }) => titles.get(rungId) ?? ''),
-    hurts: logs.filter(({ note }) => note.startsWith('Stopped: it hurt')).map(({ practisedOn, note }) => ({ on: practisedOn, note })),
-  };
+function levelOf(ladder: StudentLadder): StudentStanding['level'] {
+  const level = currentLevel(ladder);
+  return level ? { no: level.no, title: level.title, passed: level.rungs.filter(({ state }) => hasRung(state)).length, count: level.rungs.length } : null;
 }
+
+const textOf = ({ rungs }: Standing, rungId: string): Rung | undefined => rungs.find(({ id }) => id === rungId);
+
+/** The latest on top. */
+function passedRungs(read: Standing, hearings: readonly Hearing[], credits: readonly RungCredit[]): PassedRung[] {
+  return read.standing.filter(({ state }) => hasRung(state)).flatMap((one) => {
+    const text = textOf(read, one.rung);
+    return text ? [{ id: text.id, code: text.code, title: text.title, isToRecheck: one.state === 'recheck_due', ...passedWhen(one, hearings, credits) }] : [];
+  }).reverse().sort((a, b) => (b.on ?? '').localeCompare(a.on ?? ''));
+}
+
+function passedWhen({ rung, since, hearingId }: StudentRung, hearings: readonly Hearing[], credits: readonly RungCredit[]): Pick<PassedRung, 'on' | 'how'> {
+  const heard = hearings.find(({ id }) => id === hearingId);
+  if (heard) return { on: heard.decidedOn, how: `heard by ${heard.assessorName}` };
+  const credit = credits.find(({ rungId }) => rungId === rung);
+  return credit ? { on: credit.creditedOn, how: `credited by ${credit.byName}: ${credit.reason}` } : { on: since, how: 'credited' };
+}
+
+const SHOWN = 20;
+
+async function heardRungs(read: Standing, hearings: readonly Hearing[], { context, seesNotes }: { context: Context; seesNotes: boolean }): Promise<HeardRung[]> {
+  const decided = hearings.filter(({ outcome }) => outcome !== null).slice(0, SHOWN);
+  const heard = await keysHeardIn(context.db, decided.map(({ id }) => id));
+  return decided.flatMap((hearing) => {
+    const { id, outcome, decidedOn, assessorName, notePublic, notePrivate } = hearing;
+    const text = textOf(read, hearing.rungId);
+    if (!text || !outcome || !decidedOn) return [];
+    const keys = keysOf(hearing, text, { heard: heard.get(id) ?? new Set<number>(), style: context.school.chordStyle });
+    return [{ id, code: text.code, title: text.title, outcome, on: decidedOn, by: assessorName, ...keys, notePublic, notePrivate: seesNotes ? notePrivate : '' }];
+  });
+}
+
+function keysOf({ drawn }: Hearing, { spec }: Rung, { heard, style }: { heard: ReadonlySet<number>; style: ChordStyle }): Pick<HeardRung, 'keysHeard' | 'keysMissed'> {
+  const labels = drawn.map((one, no) => ({ label: drawnLabel(spec, one, style), isHeard: heard.has(no) }));
+  return { keysHeard: labels.filter(({ isHeard }) => isHeard).map(({ label }) => label), keysMissed: labels.filter(({ isHeard }) => !isHeard).map(({ label }) => label) };
+}
+
+const openRechecks = (read: Standing, asked: readonly AskedRecheck[]): OpenRecheck[] =>
+  read.standing.filter(({ state }) => state === 'recheck_due').flatMap(({ rung }) => {
+    const [text, request] = [textOf(read, rung), asked.find(({ rungId }) => rungId === rung)];
+    return text ? [{ rungId: rung, code: text.code, title: text.title, reason: request?.reasonPrivate ?? '', by: request?.byName ?? null, on: request?.askedOn ?? null }] : [];
+  });

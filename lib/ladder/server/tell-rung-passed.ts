@@ -8,10 +8,17 @@ import { queueMail } from '@/lib/messages/server/queue-mail';
 import type { Context } from '@/lib/server/context';
 import { env } from '@/lib/server/env';
 import { ageOn } from '@/lib/time';
+import { staysFrom } from '../undo';
 
 const ADULT_YEARS = 18;
 
-/** Tells the guardians of a minor, or a grown student, in plain words. Answers how many mails were queued. */
+/** What the mails of one hearing are filed under. */
+export const mailsOf = (hearingId: string): string => `hearing:${hearingId}`;
+
+/**
+ * Tells the guardians of a minor, or a grown student, in plain words, once the decision can no longer be taken back:
+ * nobody is congratulated and then told otherwise. Answers how many mails were queued.
+ */
 export async function tellRungPassed(trx: Trx, context: Context, { hearing, rung, student, notePublic }: { hearing: Hearing; rung: Rung; student: Person; notePublic: string }): Promise<number> {
   const name = student.calledName ?? student.givenName;
   let told = 0;
@@ -19,7 +26,7 @@ export async function tellRungPassed(trx: Trx, context: Context, { hearing, rung
   for (const personId of readers) {
     const isSelf = personId === student.id;
     const isNew = await queueMail(trx, context, { personId }, {
-      topic: 'rung_passed', key: `rung_passed:${hearing.id}:${personId}:1`, subjectRef: `hearing:${hearing.id}`,
+      topic: 'rung_passed', key: `rung_passed:${hearing.id}:${personId}:1`, subjectRef: mailsOf(hearing.id), notBefore: staysFrom(context.now),
       subject: isSelf ? `You passed a rung: ${rung.plainTitle}` : `${name} passed a rung: ${rung.plainTitle}`,
       lines: [
         `${isSelf ? 'You' : name} can now ${rung.canDo}.`,

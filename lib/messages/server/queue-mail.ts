@@ -19,6 +19,8 @@ export type Mail = {
   link?: { label: string; url: string };
   footer?: string;
   attachments?: MailAttachment[];
+  /** It waits in the outbox until then; what may still be taken back is not told yet. */
+  notBefore?: EpochSeconds;
 };
 
 /** A person of the school, or somebody who only gave a name and an address. */
@@ -37,6 +39,6 @@ export async function queueMail(trx: Trx, { now, school }: Moment, to: MailTo, m
   const text = { schoolName: school.name, greeting: `Dear ${strictName(recipient.name)},`, lines: mail.lines, link: mail.link, footer: mail.footer };
   return insertMail(trx, {
     id: newId(), key: mail.key, topic: mail.topic, subjectRef: mail.subjectRef, recipientId: recipient.personId, toName: strictName(recipient.name),
-    toAddress: address, subject: mail.subject, bodyText: plainMail(text), bodyHtml: htmlMail(text), attachments: mail.attachments, createdAt: now,
+    toAddress: address, subject: mail.subject, bodyText: plainMail(text), bodyHtml: htmlMail(text), attachments: mail.attachments, createdAt: now, nextTryAt: mail.notBefore ?? 0,
   });
 }

@@ -1,9 +1,9 @@
 import 'server-only';
 import { liveCreditsOf } from '@/db/credits';
-import { guardianLines } from '@/db/desk';
 import { enrolmentsOfStudent, LIVE_ENROLMENTS } from '@/db/enrolments';
 import { familyOfStudent } from '@/db/families';
 import { findPerson, fullName } from '@/db/people';
+import { contactsOfStudent } from '@/db/student-contacts';
 import { lessonsOfStudents, listStudents, type StudentListRow } from '@/db/student-lists';
 import type { Context } from '@/lib/server/context';
 import { addDays, ageOn } from '@/lib/time';
@@ -18,12 +18,14 @@ export async function readStudent({ id }: { id: string }, { db, ability, today }
   const person = await findPerson(db, id);
   if (!person || !may(ability, 'read', 'Student', { id })) return null;
   const enrolments = await enrolmentsOfStudent(db, id);
-  const seesContacts = may(ability, 'read', 'Contact', { personId: id });
   return {
-    id, name: fullName(person), age: person.bornOn ? ageOn(person.bornOn, today) : null, reachSemitones: person.reachSemitones,
+    id, name: fullName(person), age: person.bornOn ? ageOn(person.bornOn, today) : null, isStudent: person.isStudent,
+    /** How far one hand reaches; for those who teach. */
+    reach: may(ability, 'read', 'Reach', { studentId: id }) ? { semitones: person.reachSemitones, mayChange: may(ability, 'update', 'Reach', { studentId: id }) } : null,
     enrolments: enrolments.filter(({ state }) => (LIVE_ENROLMENTS as readonly string[]).includes(state)),
     family: may(ability, 'read', 'Family') ? ((await familyOfStudent(db, id)) ?? null) : null,
-    guardianLine: seesContacts ? ((await guardianLines(db, [id])).get(id) ?? null) : null,
+    // Those of the adults too: for who may read everybody's, not for who may read their own.
+    contacts: may(ability, 'read', 'Contact') ? await contactsOfStudent(db, id) : null,
     credits: await liveCreditsOf(db, [id], today),
     lessons: await lessonsOfStudents(db, [id], { from: addDays(today, -28), until: addDays(today, 28) }),
   };

@@ -6,6 +6,7 @@ import { requireContextTo } from '@/lib/server/context';
 import { orNotFound } from '@/lib/server/or-not-found';
 import { formatDate } from '@/lib/format';
 import { HearingDesk } from './_components/hearing-desk';
+import { JustDecided } from './_components/just-decided';
 
 export const metadata = { title: 'Hearing' };
 
@@ -23,6 +24,7 @@ export default async function HearingPage({ params, searchParams }: Address) {
     <>
       <PageHeader title={`${ladder.student.name}, hearing`} sub={`${where}.${lastAim ? ` Last time: ${lastAim}` : ''}`}
         actions={<ButtonLink href={`/students/${studentId}`}>Student</ButtonLink>} />
+      {screen.justDecided.map((decided) => <JustDecided key={decided.id} decided={decided} />)}
       <HearingDesk key={`${screen.rung?.id ?? ''}:${screen.underWay?.id ?? ''}`} screen={screen} locale={locale} />
     </>
   );

@@ -11,13 +11,13 @@ export function HearingsInWords({ hearings, locale, isReader }: { hearings: read
   return (
     <Sheet title="Hearings" flush>
       <ul className="border-t border-rule">
-        {hearings.map(({ id, plainTitle, outcome, on, by, note }) => (
+        {hearings.map(({ id, plainTitle, title, outcome, on, by, note }) => (
           <li key={id} className="grid gap-1 border-b border-rule px-4 py-3 last:border-b-0">
             <p className="flex flex-wrap items-center justify-between gap-2">
               <span className="font-bold">{plainTitle}</span>
               <Chip tone={outcome === 'passed' ? 'ok' : 'wait'} icon={outcome === 'passed' ? <Check size={13} aria-hidden /> : <Clock size={13} aria-hidden />}>{OUTCOME_WORDS[outcome]}</Chip>
             </p>
-            <p className="text-small text-ink-3">{`${formatDate(on, locale, 'short')}, heard by ${by}`}</p>
+            <p className="text-small text-ink-3">{`${formatDate(on, locale, 'short')}, heard by ${by}`}<span className="block text-[12.5px]">{`Musicians say: ${title}`}</span></p>
             {note ? <p className="max-w-[58ch]">{`“${note}”`}</p> : null}
           </li>
         ))}

@@ -13,7 +13,7 @@ import { decide } from '../../actions';
 
 type DecideDialogProps = { hearingId: string; outcome: 'passed' | 'not_yet'; rung: NonNullable<HearingScreen['rung']>; keysHeard: number; firstName: string; onClose: () => void };
 
-/** Shown once before it is for good: what it does, who is told, and the words that go with it. */
+/** Shown once before it is decided: what it does, who is told, and the words that go with it. */
 export function DecideDialog(props: DecideDialogProps) {
   const { outcome, rung, onClose } = props;
   return (
@@ -23,7 +23,7 @@ export function DecideDialog(props: DecideDialogProps) {
   );
 }
 
-const passedWords = (told: number): string => `Passed. ${told > 0 ? `${plural(told, 'mail')} on the way.` : 'Nobody is told by mail.'}`;
+const passedWords = (told: number): string => `Passed. ${told > 0 ? `${plural(told, 'mail goes', 'mails go')} out in ten minutes.` : 'Nobody is told by mail.'}`;
 
 function DecideForm({ hearingId, outcome, rung, keysHeard, firstName, onClose }: DecideDialogProps) {
   const isPass = outcome === 'passed';
@@ -59,11 +59,12 @@ const Decision = ({ isPass, isSubmitting, onClose }: { isPass: boolean; isSubmit
   </div>
 );
 
+const TAKE_BACK = 'You can take it back within ten minutes; after that it stays.';
 const passConsequences = (firstName: string, heard: number, drawn: number) => [
   `${firstName}’s ladder shows the rung as passed, with ${heard} of ${drawn} keys heard as its proof.`,
-  `The guardians who see ${firstName}’s progress get a mail in plain words (a grown student gets it directly).`,
-  'It cannot be changed afterwards.',
+  `The guardians who see ${firstName}’s progress get a mail in plain words after ten minutes (a grown student gets it directly).`,
+  TAKE_BACK,
 ];
 const notYetConsequences = (firstName: string) => [
-  `${firstName} keeps working on the rung; it may be heard again after the waiting days.`, 'No mail goes out; the family reads your words on the progress page.', 'It cannot be changed afterwards.',
+  `${firstName} keeps working on the rung; it may be heard again after the waiting days.`, 'No mail goes out; the family reads your words on the progress page.', TAKE_BACK,
 ];

@@ -1,4 +1,5 @@
 import { handsSentence, splitHands } from '@/lib/harmony/hands';
+import { reachWords } from '@/lib/harmony/reach';
 import type { Ask } from '@/lib/ladder/asks';
 
 const CAUTION = 'Stop if a stretch hurts; re-spread the voicing instead.';
@@ -12,7 +13,7 @@ export function HandsPanel({ ask, reachSemitones }: { ask: Ask | undefined; reac
     <section className="sheet px-4 py-[14px]" aria-label="Hands">
       <p className="eyebrow">Hands</p>
       <p className="mt-[6px] text-small">{text}</p>
-      <p className="mt-1 text-small text-ink-3">{`Comfortable reach set for this student: ${reachSemitones} semitones.`}</p>
+      <p className="mt-1 text-small text-ink-3">{`Comfortable reach noted for this student: ${reachWords(reachSemitones)}.`}</p>
     </section>
   );
 }

@@ -6,7 +6,7 @@ import { Button } from '@/components/ui/button';
 import { SelectField, TextField } from '@/components/ui/inputs';
 import { printedNote } from '@/lib/harmony/note';
 import type { setPracticeSchema } from '@/lib/ladder/schema';
-import type { RungChoice } from '@/lib/ladder/server/student-standing';
+import type { RungChoice } from '@/lib/ladder/server/practice-for-staff';
 
 type FieldsProps = { form: UseFormReturn<z.input<typeof setPracticeSchema>, unknown, z.output<typeof setPracticeSchema>>; at: number; choices: readonly RungChoice[]; onRemove: (() => void) | undefined };
 const number = { setValueAs: (value: string | number | null) => (value === null || String(value).trim() === '' ? null : Number(value)) };

@@ -1,13 +1,18 @@
 import { HeartPulse } from 'lucide-react';
 import { Sheet } from '@/components/ui/sheet';
 import { formatDate, plural } from '@/lib/format';
-import type { StudentStanding } from '@/lib/ladder/server/student-standing';
-import type { LocalDate } from '@/lib/time';
+import type { StaffPractice } from '@/lib/ladder/server/practice-for-staff';
+import { addDays, type LocalDate } from '@/lib/time';
 import { SetPractice } from './set-practice';
 
-/** What is set, how much was played, what does not sit any more, and whether it hurt. */
-export function PracticePanel({ standing: { ladder, practice, choices, maySet }, nextLessonOn, locale }: { standing: StudentStanding; nextLessonOn: LocalDate; locale: string }) {
-  const { set, minutes, weak, hurts } = practice;
+type PracticeProps = { practice: StaffPractice | null; lessons: readonly { localDate: LocalDate }[]; locale: string; today: LocalDate };
+const DAYS_WITHOUT_LESSON = 7;
+
+/** What is set, how much was played, what does not sit any more, and whether it hurt. Nothing for who may not see it. */
+export function Practice({ practice, lessons, locale, today }: PracticeProps) {
+  if (!practice) return null;
+  const nextLessonOn = lessons.find(({ localDate }) => localDate > today)?.localDate ?? addDays(today, DAYS_WITHOUT_LESSON);
+  const { set, minutes, weak, hurts, maySet } = practice;
   return (
     <Sheet eyebrow="Practice">
       <div className="grid gap-3">
@@ -21,7 +26,7 @@ export function PracticePanel({ standing: { ladder, practice, choices, maySet },
         ) : <p className="text-ink-3">Nothing is set.</p>}
         <p className="num text-ink-2">{minutes === 0 ? 'No minutes noted in two weeks.' : `${plural(minutes, 'minute')} in two weeks.`}</p>
         {weak.length > 0 ? <p className="text-ink-2">{`Failed twice in review: ${weak.join(', ')}.`}</p> : null}
-        {maySet ? <SetPractice studentId={ladder.student.id} firstName={ladder.student.firstName} choices={choices} nextRungId={ladder.next[0] ?? ''} dueOn={nextLessonOn} /> : null}
+        {maySet ? <SetPractice practice={practice} dueOn={nextLessonOn} /> : null}
       </div>
     </Sheet>
   );

@@ -11,12 +11,11 @@ import { FormError } from '@/components/ui/form-error';
 import { DateField } from '@/components/ui/inputs';
 import { useActionForm } from '@/components/ui/use-action-form';
 import { setPracticeSchema } from '@/lib/ladder/schema';
-import type { RungChoice } from '@/lib/ladder/server/student-standing';
+import type { RungChoice, StaffPractice } from '@/lib/ladder/server/practice-for-staff';
 import type { LocalDate } from '@/lib/time';
 import { givePractice } from '../actions';
 import { PracticeItemFields } from './practice-item-fields';
 
-type SetPracticeProps = { studentId: string; firstName: string; choices: readonly RungChoice[]; nextRungId: string; dueOn: LocalDate };
 const KEYS_AT_FIRST = 3;
 const MOST_ITEMS = 8;
 const MINUTES_AT_FIRST = 10;
@@ -24,7 +23,7 @@ const MINUTES_AT_FIRST = 10;
 const itemFor = (choice: RungChoice | undefined) => ({ rungId: choice?.id ?? '', piece: '', keys: choice?.keyPool.slice(0, KEYS_AT_FIRST) ?? [], beatsPerMinute: choice?.beatsPerMinute ?? null, minutes: MINUTES_AT_FIRST, howRight: '' });
 
 /** The next rung in its first keys stands there already: two presses for the usual week. */
-export function SetPractice({ studentId, firstName, choices, nextRungId, dueOn }: SetPracticeProps) {
+export function SetPractice({ practice: { studentId, firstName, choices, nextRungId }, dueOn }: { practice: StaffPractice; dueOn: LocalDate }) {
   const router = useRouter();
   const [open, setOpen] = useState(false);
   const form = useActionForm({
