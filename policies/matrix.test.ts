@@ -8,12 +8,16 @@ import { accessHouse, contextOfColumn } from '@/tests/factories/access-house';
 import { AppError } from '@/lib/errors';
 import type { Context } from '@/lib/server/context';
 import { instantOf } from '@/lib/time';
+import { addClosure } from '@/lib/calendar/server/add-closure';
+import { addTerm } from '@/lib/calendar/server/add-term';
 import { bookByHand } from '@/lib/calendar/server/book-by-hand';
 import { calendarEntries } from '@/lib/calendar/server/calendar-week';
 import { boardLessons } from '@/lib/calendar/server/day-board';
 import { familyLessons, reportAbsence } from '@/lib/calendar/server/family-lessons';
 import { checkIn, markAttendance } from '@/lib/calendar/server/mark-attendance';
 import { readEnquiries } from '@/lib/calendar/server/read-enquiries';
+import { readTerms } from '@/lib/calendar/server/read-terms';
+import { takeClosureAway } from '@/lib/calendar/server/take-closure-away';
 import { takeEnquiryList } from '@/lib/calendar/server/take-enquiry-list';
 import { takeEnquiry } from '@/lib/calendar/server/take-enquiry';
 import { deskEnquirySchema } from '@/lib/calendar/schema';
@@ -88,6 +92,19 @@ async function takesEveryList(context: Context): Promise<boolean> {
   return taken > 0;
 }
 
+/** A term, a closed day and its taking away: who may do one may do all three. */
+async function changesTerms(context: Context): Promise<void> {
+  const tries = [
+    () => addTerm({ name: 'Summer', startsOn: '2027-07-05', endsOn: '2027-07-30' }, context),
+    () => addClosure({ from: '2027-03-01', until: '2027-03-01', siteId: '', reason: 'Staff day', fromTime: '', toTime: '' }, context),
+    () => takeClosureAway({ closureId: made.closureId }, context),
+  ];
+  const refusals: unknown[] = [];
+  for (const attempt of tries) await attempt().catch((error: unknown) => refusals.push(error));
+  if (refusals.length === tries.length) throw refusals[0];
+  if (refusals.length > 0) throw new Error(`${refusals.length} of ${tries.length} changes of terms were refused`);
+}
+
 /** One attempt for each verb of each row. A record that is not shown, a null and a refusal are all "none". */
 const ATTEMPTS: Record<RowName, Partial<Record<Verb, Attempt>>> = {
   calendar: {
@@ -111,6 +128,7 @@ const ATTEMPTS: Record<RowName, Partial<Record<Verb, Attempt>>> = {
   },
   prices: { read: always(readPriceList), write: always((context) => setPrice({ productId: 'lesson', lengthMinutes: 30, amount: '43', validFrom: '2027-01-01' }, context)) },
   houseRules: { read: always(readHouseRules), write: always((context) => changeHouseRule({ key: 'credit.valid_days', value: 90, validFrom: '2027-01-01' }, context)) },
+  terms: { read: always(readTerms), write: always(changesTerms) },
   invoice: { read: (context, { invoiceId }) => staffInvoice({ invoiceId }, context) },
   share: { read: (context, { invoiceId }) => payerInvoice({ invoiceId }, context) },
   payment: {
