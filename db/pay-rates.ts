@@ -15,6 +15,6 @@ export async function insertPayRule(trx: Trx, { value, ...rule }: PayRule & { id
 
 type RuleRow = { kind: string; engagementKind: PayRule['engagementKind']; valueJson: string; validFrom: LocalDate; validTo: LocalDate | null };
 export async function allPayRules(db: Db): Promise<PayRule[]> {
-  const rows: RuleRow[] = await db('pay_rule').whereIn('kind', ['absence', 'substitute']).select('kind', 'engagementKind', 'valueJson', 'validFrom', 'validTo');
+  const rows: RuleRow[] = await db('pay_rule').where({ kind: 'substitute' }).select('kind', 'engagementKind', 'valueJson', 'validFrom', 'validTo');
   return rows.map(({ valueJson, ...rule }) => ({ ...rule, value: JSON.parse(valueJson) as unknown }) as PayRule);
 }

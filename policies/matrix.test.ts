@@ -11,7 +11,9 @@ import { instantOf } from '@/lib/time';
 import { addClosure } from '@/lib/calendar/server/add-closure';
 import { addTerm } from '@/lib/calendar/server/add-term';
 import { bookByHand } from '@/lib/calendar/server/book-by-hand';
+import { CONSEQUENCES } from '@/lib/calendar/consequences';
 import { calendarEntries } from '@/lib/calendar/server/calendar-week';
+import { changeConsequence, readConsequences } from '@/lib/calendar/server/change-consequence';
 import { boardLessons } from '@/lib/calendar/server/day-board';
 import { familyLessons, reportAbsence } from '@/lib/calendar/server/family-lessons';
 import { checkIn, markAttendance } from '@/lib/calendar/server/mark-attendance';
@@ -128,6 +130,7 @@ const ATTEMPTS: Record<RowName, Partial<Record<Verb, Attempt>>> = {
   },
   prices: { read: always(readPriceList), write: always((context) => setPrice({ productId: 'lesson', lengthMinutes: 30, amount: '43', validFrom: '2027-01-01' }, context)) },
   houseRules: { read: always(readHouseRules), write: always((context) => changeHouseRule({ key: 'credit.valid_days', value: 90, validFrom: '2027-01-01' }, context)) },
+  consequences: { read: always(readConsequences), write: always((context) => changeConsequence({ mark: 'no_show', consequence: CONSEQUENCES.late_notice, validFrom: '2027-01-01' }, context)) },
   terms: { read: always(readTerms), write: always(changesTerms) },
   invoice: { read: (context, { invoiceId }) => staffInvoice({ invoiceId }, context) },
   share: { read: (context, { invoiceId }) => payerInvoice({ invoiceId }, context) },

@@ -50,6 +50,7 @@ export const MATRIX = {
   enquiries: { thing: 'Enquiries', tries: ['read', 'write'], cells: { ...NOBODY, owner: readAndWriteAll, desk: readAndWriteAll } },
   prices: { thing: 'Prices', tries: ['read', 'write'], cells: { ...NOBODY, owner: readAndWriteAll, desk: readAll } },
   houseRules: { thing: 'House rules', tries: ['read', 'write'], cells: { ...NOBODY, owner: readAndWriteAll } },
+  consequences: { thing: 'What each mark means for charge, credit and pay', tries: ['read', 'write'], cells: { ...NOBODY, owner: readAndWriteAll } },
   terms: { thing: 'Terms and closed days', tries: ['read', 'write'], cells: { ...NOBODY, owner: readAndWriteAll, desk: readAll, teacher: readAll, substitute: readAll, lead: readAll } },
   invoice: { thing: 'Invoice of a family, all shares', tries: ['read'], cells: { ...NOBODY, owner: readAll, desk: readAll } },
   share: { thing: 'One’s own share of an invoice', tries: ['read'], cells: { ...NOBODY, student: readOwn, guardian: readOwn } },

@@ -1,8 +1,10 @@
 'use server';
 
 import { revalidatePath } from 'next/cache';
+import { changeConsequenceSchema } from '@/lib/calendar/consequence-schema';
 import { addClosure } from '@/lib/calendar/server/add-closure';
 import { addTerm } from '@/lib/calendar/server/add-term';
+import { changeConsequence } from '@/lib/calendar/server/change-consequence';
 import { takeClosureAway } from '@/lib/calendar/server/take-closure-away';
 import { addClosureSchema, addTermSchema, closureSchema } from '@/lib/calendar/term-schema';
 import { backgroundCheckSchema, inviteSchema, newStaffSchema, userSchema } from '@/lib/people/schema';
@@ -27,3 +29,4 @@ export const saveCheck = action(backgroundCheckSchema, async (input, context) =>
 export const saveTerm = action(addTermSchema, async (input, context) => { const added = await addTerm(input, context); fresh(); return added; });
 export const saveClosure = action(addClosureSchema, async (input, context) => { const closed = await addClosure(input, context); fresh(); return closed; });
 export const dropClosure = action(closureSchema, async (input, context) => { await takeClosureAway(input, context); fresh(); });
+export const saveConsequence = action(changeConsequenceSchema, async (input, context) => { await changeConsequence(input, context); fresh(); });

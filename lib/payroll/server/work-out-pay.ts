@@ -3,6 +3,7 @@ import type { Db } from '@/db/connection';
 import { approvedMileage, approvedTime, engagementsIn, lessonsBegun, seatsOfLessons, type Engagement, type PaySeat, type TaughtLesson } from '@/db/pay-facts';
 import { allPayRates, allPayRules } from '@/db/pay-rates';
 import type { PayRunWithPeriod } from '@/db/pay-runs';
+import { datedConsequences } from '@/db/settings';
 import type { MoneyWords } from '@/lib/explained';
 import type { EpochSeconds, LocalDate } from '@/lib/time';
 import { payLineOfMileage, payLineOfTime, payLinesOfLesson, type LessonFacts, type PayLine } from '../pay-lines';
@@ -20,7 +21,7 @@ export async function workOutPay(db: Db, run: Pick<PayRunWithPeriod, 'startsOn' 
   const period = { from: run.startsOn, to: run.endsOn };
   const engagements = await engagementsIn(db, period);
   const own = new Set(engagements.filter(({ legalEntityId, kind }) => legalEntityId === run.legalEntityId && kind === run.engagementKind).map(({ engagementId }) => engagementId));
-  const facts = { rates: await allPayRates(db), rules: await allPayRules(db), words };
+  const facts = { rates: await allPayRates(db), rules: await allPayRules(db), consequences: await datedConsequences(db), words };
   const seats = seatsByLesson(await seatsOfLessons(db, period));
   const lessons = (await lessonsBegun(db, period, now)).flatMap((lesson) => {
     const known = lessonFacts(lesson, seats.get(lesson.occurrenceId) ?? [], engagements);
