@@ -55,7 +55,7 @@ import { tuitionRunDetail } from '@/lib/tuition/server/tuition-run-screen';
 import { COLUMNS, LATER, MATRIX, type BuiltRow, type Column, type RowName, type Verb } from './matrix';
 
 /** What an attempt is about: records of the person’s own, or of a family and a teacher they have nothing to do with. */
-type Target = { studentId: string; familyId: string; payerId: string; engagementId: string; invoiceId: string; seatToday: string; seatNextWeek: string };
+type Target = { studentId: string; familyId: string; payerId: string; engagementId: string; invoiceId: string; seatToday: string; seatNextWeek: string; seatLastMonth: string };
 type Attempt = (context: Context, target: Target) => Promise<unknown>;
 
 let db: Knex;
@@ -76,6 +76,17 @@ const ZONE = 'America/New_York';
 const TODAY = { startsAt: instantOf('2026-11-17', 0, ZONE), endsAt: instantOf('2026-11-18', 0, ZONE) };
 const mark = (attendance: 'present' | 'excused'): Attempt => (context, { seatToday }) =>
   markAttendance({ seatId: seatToday, attendance, minutesLate: null, toldAt: null, toldVia: 'desk', rowVersion: 1 }, context);
+const MARK = { minutesLate: null, toldAt: null, toldVia: 'desk' } as const;
+/** A closed pay run refuses everybody alike, with words of its own. */
+const markLocked: Attempt = async (context, { seatLastMonth }) => {
+  await context.db('occurrence').whereIn('id', context.db('seat').where({ id: seatLastMonth }).select('occurrenceId')).update({ lockedByPayRunId: made.payRunId });
+  try {
+    return await markAttendance({ ...MARK, seatId: seatLastMonth, attendance: 'no_show', rowVersion: 2 }, context);
+  } catch (error) {
+    if (error instanceof AppError && error.code === 'conflict' && error.message.startsWith('This lesson is in a closed pay run.')) return null;
+    throw error;
+  }
+};
 const always = (work: (context: Context) => Promise<unknown>): Attempt => async (context) => { await work(context); return true; };
 
 /** Every list, one after the other: who may take one may take them all, or the grants are crooked. */
@@ -119,6 +130,9 @@ const ATTEMPTS: Record<RowName, Partial<Record<Verb, Attempt>>> = {
   },
   busyTimes: { read: async (context) => (await calendarEntries({ from: TODAY.startsAt, until: TODAY.endsAt, teacherId: 'viktor' }, context)).some(({ kind }) => kind === 'busy' || kind === 'lesson') },
   attendance: { write: mark('present') },
+  attendanceAfter: { write: (context, { seatLastMonth }) => markAttendance({ ...MARK, seatId: seatLastMonth, attendance: 'no_show', rowVersion: 2 }, context) },
+  attendanceBefore: { write: (context, { seatNextWeek }) => markAttendance({ ...MARK, seatId: seatNextWeek, attendance: 'away_with_notice', rowVersion: 1 }, context) },
+  attendanceLocked: { write: markLocked },
   absence: { write: (context, { seatNextWeek }) => reportAbsence({ seatId: seatNextWeek }, context) },
   arrival: { write: async (context, { seatToday }) => { await checkIn({ seatId: seatToday, hasArrived: true }, context); return true; } },
   excuse: { write: mark('excused') },
@@ -181,7 +195,7 @@ async function targetOf(column: Column, whose: 'own' | 'foreign'): Promise<Targe
   const seats: { id: string; localDate: string }[] = await db('seat as s').join('occurrence as o', 'o.id', 's.occurrenceId').where({ studentId }).select('s.id', 'o.localDate');
   const invoice = await db<{ id: string; familyId: string }>('invoice').where({ familyId: family.familyId }).first('id');
   const seatOn = (date: string) => seats.find(({ localDate }) => localDate === date)!.id;
-  return { studentId, ...family, engagementId: whose === 'own' ? own.engagementId : own.foreignEngagementId, invoiceId: invoice!.id, seatToday: seatOn('2026-11-17'), seatNextWeek: seatOn('2026-11-24') };
+  return { studentId, ...family, engagementId: whose === 'own' ? own.engagementId : own.foreignEngagementId, invoiceId: invoice!.id, seatToday: seatOn('2026-11-17'), seatNextWeek: seatOn('2026-11-24'), seatLastMonth: seatOn('2026-10-06') };
 }
 
 class Undone extends Error {}

@@ -33,9 +33,18 @@ export const MATRIX = {
     cells: { ...NOBODY, owner: readAll, desk: readAll, teacher: readAll, substitute: readAll, lead: readAll },
   },
   attendance: {
-    thing: 'Attendance of a lesson, until its pay run is closed', tries: ['write'],
-    cells: { ...NOBODY, owner: writeAll, desk: writeAll, teacher: writeOwn, substitute: writeOwn, lead: writeOwn },
+    thing: 'Attendance of a lesson of today', tries: ['write'],
+    cells: { ...NOBODY, owner: writeAll, desk: writeAll, teacher: writeOwn, substitute: writeOwn, lead: writeAll },
   },
+  attendanceAfter: {
+    thing: 'Attendance of an earlier lesson, until its pay run is closed', tries: ['write'],
+    cells: { ...NOBODY, owner: writeAll, desk: writeAll, teacher: writeOwn, lead: writeAll },
+  },
+  attendanceBefore: {
+    thing: 'An absence told for a lesson to come, taken down by the school', tries: ['write'],
+    cells: { ...NOBODY, owner: writeAll, desk: writeAll, teacher: writeOwn, lead: writeAll },
+  },
+  attendanceLocked: { thing: 'Attendance of a lesson in a closed pay run', tries: ['write'], cells: NOBODY },
   absence: {
     thing: 'Telling on the screen that a lesson will be missed', tries: ['write'],
     cells: { ...NOBODY, owner: writeAll, desk: writeAll, student: writeOwn, guardian: writeOwn },
