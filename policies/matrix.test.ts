@@ -32,6 +32,7 @@ import { schoolLadder } from '@/lib/ladder/server/school-ladder';
 import { startHearing } from '@/lib/ladder/server/start-hearing';
 import { askAboutPay, passOverTeacher } from '@/lib/payroll/server/check-pay';
 import { gatherPayRun } from '@/lib/payroll/server/gather-pay-run';
+import { beginRate, readRates } from '@/lib/payroll/server/pay-rates';
 import { payRunScreen } from '@/lib/payroll/server/pay-run-screen';
 import { payWorkbook } from '@/lib/payroll/server/pay-workbook';
 import { teacherPay } from '@/lib/payroll/server/teacher-pay';
@@ -161,6 +162,10 @@ const ATTEMPTS: Record<RowName, Partial<Record<Verb, Attempt>>> = {
     read: always((context) => payRunScreen({ payRunId: made.payRunId }, context)),
     write: always((context) => gatherPayRun({ payRunId: made.payRunId }, context)),
     approve: always((context) => passOverTeacher({ payRunId: made.payRunId, engagementId: 'engagement-mara', reason: 'On leave' }, { ...context, today: '2026-11-21' })),
+  },
+  rates: {
+    read: always(readRates),
+    write: always((context) => beginRate({ engagementId: 'engagement-mara', workType: 'lesson', lessonTypeId: null, lengthMinutes: 30, seatsFrom: null, seatsTo: null, per: 'lesson', amount: '25', validFrom: '2027-01-01' }, context)),
   },
   payLines: {
     read: (context, { engagementId }) => teacherPay({ payRunId: made.payRunId, engagementId }, context),

@@ -66,6 +66,7 @@ export const MATRIX = {
   payment: { thing: 'Payment taken at the desk', tries: ['read', 'write'], cells: { ...NOBODY, owner: readAndWriteAll, desk: readAndWriteAll } },
   tuitionRun: { thing: 'Tuition run', tries: ['read', 'write', 'approve'], cells: { ...NOBODY, owner: [...readAndWriteAll, 'approve all'], desk: readAll } },
   payRun: { thing: 'Pay run', tries: ['read', 'write', 'approve'], cells: { ...NOBODY, owner: [...readAndWriteAll, 'approve all'] } },
+  rates: { thing: 'Pay rates of every teacher', tries: ['read', 'write'], cells: { ...NOBODY, owner: readAndWriteAll } },
   payLines: {
     thing: 'A teacher’s pay lines, and a question about them', tries: ['read', 'write'],
     cells: { ...NOBODY, owner: readAndWriteAll, teacher: readAndWriteOwn, substitute: readAndWriteOwn, lead: readAndWriteOwn },

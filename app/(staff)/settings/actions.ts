@@ -13,6 +13,8 @@ import { addStaff } from '@/lib/people/server/add-staff';
 import { changeHouseRule, changeRuleSchema } from '@/lib/people/server/house-rules';
 import { invitePerson } from '@/lib/people/server/invite-person';
 import { recordBackgroundCheck } from '@/lib/people/server/staff-papers';
+import { beginRateSchema } from '@/lib/payroll/rate-schema';
+import { beginRate } from '@/lib/payroll/server/pay-rates';
 import { action } from '@/lib/server/action';
 import { changePriceSchema, changeTaxSchema } from '@/lib/tuition/price-schema';
 import { setPrice, setTax } from '@/lib/tuition/server/price-list';
@@ -30,3 +32,4 @@ export const saveTerm = action(addTermSchema, async (input, context) => { const 
 export const saveClosure = action(addClosureSchema, async (input, context) => { const closed = await addClosure(input, context); fresh(); return closed; });
 export const dropClosure = action(closureSchema, async (input, context) => { await takeClosureAway(input, context); fresh(); });
 export const saveConsequence = action(changeConsequenceSchema, async (input, context) => { await changeConsequence(input, context); fresh(); });
+export const saveRate = action(beginRateSchema, async (input, context) => { await beginRate(input, context); fresh(); });

@@ -7,10 +7,8 @@ import { datedConsequences } from '@/db/settings';
 import type { MoneyWords } from '@/lib/explained';
 import type { EpochSeconds, LocalDate } from '@/lib/time';
 import { payLineOfMileage, payLineOfTime, payLinesOfLesson, type LessonFacts, type PayLine } from '../pay-lines';
-import type { WorkType } from '../rates';
+import { WORK_OF_LESSON } from '../rates';
 
-/** What kind of work a kind of lesson is; what is not here is paid by the hour through time entries. */
-const WORK_OF: Record<string, WorkType> = { single: 'lesson', make_up: 'lesson', trial: 'trial', group: 'group', ensemble: 'group', workshop: 'group', drop_in: 'group' };
 /** Visitors from another class and make-up guests do not change a class's size. */
 const SIZED = new Set(['roster', 'drop_in', 'trial']);
 
@@ -44,7 +42,7 @@ function seatsByLesson(seats: readonly PaySeat[]): Map<string, PaySeat[]> {
 
 /** Null for what pays nothing by itself: no seats, or cancelled before anybody was marked. */
 function lessonFacts(lesson: TaughtLesson, seats: readonly PaySeat[], engagements: readonly Engagement[]): LessonFacts | null {
-  const workType = WORK_OF[lesson.code];
+  const workType = WORK_OF_LESSON[lesson.code];
   if (!workType || seats.length === 0) return null;
   if (lesson.state === 'cancelled' && seats.some(({ attendance }) => attendance === 'expected')) return null;
   const workerOf = (personId: string | null) => (personId === null ? null : engagementOf(engagements, { personId, on: lesson.localDate, legalEntityId: lesson.legalEntityId }));
