@@ -2,9 +2,9 @@ import type { LocalDate } from '@/lib/time';
 import type { Role } from '@/policies/ability';
 import type { Db } from './connection';
 
-export type OwnRecords = { studentIds: string[]; payerIds: string[]; familyIds: string[]; taughtStudentIds: string[] };
+export type OwnRecords = { studentIds: string[]; payerIds: string[]; familyIds: string[]; taughtStudentIds: string[]; coveredTodayIds: string[] };
 
-const NONE: OwnRecords = { studentIds: [], payerIds: [], familyIds: [], taughtStudentIds: [] };
+const NONE: OwnRecords = { studentIds: [], payerIds: [], familyIds: [], taughtStudentIds: [], coveredTodayIds: [] };
 
 /** The records that are a person's own in one hat. Read with every session, so each list comes from an index. */
 export async function ownRecords(db: Db, personId: string, role: Role, today: LocalDate): Promise<OwnRecords> {
@@ -13,7 +13,7 @@ export async function ownRecords(db: Db, personId: string, role: Role, today: Lo
     case 'desk':
       return NONE;
     case 'teacher':
-      return { ...NONE, taughtStudentIds: await taughtStudents(db, personId, today) };
+      return { ...NONE, taughtStudentIds: await taughtStudents(db, personId, today), coveredTodayIds: await coveredOn(db, personId, today) };
     case 'student':
       return { ...NONE, studentIds: [personId], ...(await payingFor(db, personId)) };
     case 'guardian':
@@ -27,6 +27,11 @@ async function taughtStudents(db: Db, teacherId: string, today: LocalDate): Prom
     .where('o.localDate', today).andWhere((query) => query.where('o.taughtById', teacherId).orWhere('o.plannedTeacherId', teacherId));
   const rows = (await enrolled.union([covered])) as { studentId: string }[];
   return rows.map((row) => row.studentId);
+}
+
+async function coveredOn(db: Db, teacherId: string, today: LocalDate): Promise<string[]> {
+  const rows: { id: string }[] = await db('occurrence').where({ taughtById: teacherId, localDate: today }).select('id');
+  return rows.map(({ id }) => id);
 }
 
 async function childrenOf(db: Db, adultId: string): Promise<string[]> {

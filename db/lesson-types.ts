@@ -14,6 +14,9 @@ export async function lessonTypeByCode(db: Db, code: LessonTypeCode): Promise<Le
   return toLessonType(row);
 }
 
+export const taughtLessonTypes = async (db: Db): Promise<LessonType[]> =>
+  (await db<Row>('lesson_type').where({ isTaught: 1 }).orderBy('label').select('id', 'code', 'label', 'seatsMin', 'seatsMax', 'isTaught')).map(toLessonType);
+
 export const allSubjects = (db: Db): Promise<Subject[]> => db<Subject>('subject').orderBy('label').select('id', 'code', 'label');
 /** What a lesson of this type must find in its room. */
 export const requiredFeatures = (db: Db, lessonTypeId: string): Promise<{ code: string; label: string }[]> =>

@@ -17,6 +17,12 @@ export async function insertTerm(trx: Trx, term: TermRow): Promise<void> {
   await trx('term').insert(term);
 }
 
+/** Terms that share a day with these dates. */
+export const termsTouching = (db: Db, { startsOn, endsOn }: Pick<TermRow, 'startsOn' | 'endsOn'>): Promise<TermRow[]> =>
+  db<TermRow>('term').where('startsOn', '<=', endsOn).where('endsOn', '>=', startsOn).orderBy('startsOn').select(...COLUMNS);
+export const findTermByName = (db: Db, name: string, yearLabel: string): Promise<TermRow | undefined> => db<TermRow>('term').where({ name, yearLabel }).first(...COLUMNS);
+export const isTermOverlap = (error: unknown): boolean => error instanceof Error && error.message.includes('term_overlap');
+
 export const closuresBetween = (db: Db, from: LocalDate, until: LocalDate): Promise<(Closure & { reason: string; kind: string })[]> =>
   db<Closure & { reason: string; kind: string }>('closure').whereBetween('closedOn', [from, until])
     .select('closedOn', 'siteId', 'fromMin', 'toMin', 'reason', 'kind').orderBy('closedOn');

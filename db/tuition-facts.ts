@@ -1,3 +1,4 @@
+import type { Attendance } from '@/lib/calendar/attendance';
 import type { ComparedLine } from '@/lib/tuition/run-difference';
 import type { TuitionModel } from '@/lib/tuition/charges';
 import type { EpochSeconds, LocalDate } from '@/lib/time';
@@ -23,7 +24,7 @@ export const enrolmentsIn = (db: Db, { from, to }: Period): Promise<BilledEnrolm
       db.raw('(SELECT min(o.starts_on) FROM enrolment o WHERE o.student_id = e.student_id) AS student_first_starts_on'))
     .orderBy(['f.name', 'f.id', 'p.bornOn', 'e.studentId', 'e.startsOn', 'e.rowid']);
 
-export type BilledSeat = { seatId: string; enrolmentId: string; localDate: LocalDate; startMin: number; attendance: string; isBilled: number };
+export type BilledSeat = { seatId: string; enrolmentId: string; localDate: LocalDate; startMin: number; attendance: Attendance; isBilled: number };
 
 /** The lessons of these enrolments inside the period. A moved lesson counts where it went. */
 export const seatsIn = (db: Db, { from, to }: Period): Promise<BilledSeat[]> =>

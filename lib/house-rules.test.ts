@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { CONSEQUENCES } from './calendar/consequences';
 import { HOUSE_RULES, houseRulesFrom } from './house-rules';
 
 describe('house rules', () => {
@@ -9,7 +10,7 @@ describe('house rules', () => {
   });
   it('each value of the house fits its own rule and each rule has words for a person', () => {
     for (const { schema, value, label } of Object.values(HOUSE_RULES)) {
-      expect(schema.parse(value)).toBe(value);
+      expect(schema.parse(value)).toEqual(value);
       expect(label).toMatch(/^[A-Z].{5,}[^.]$/);
     }
   });
@@ -20,6 +21,13 @@ describe('house rules', () => {
   it('zero is a value, not a missing one', () => expect(houseRulesFrom([{ key: 'trial.fee_minor', valueJson: '0' }])['trial.fee_minor']).toBe(0));
   it.each([['credit.valid_days', '0'], ['credit.valid_days', '"sixty"'], ['tuition.month_rule', '"weekly"'], ['trial.fee_minor', '-1'], ['trial.fee_minor', '12.5'], ['cancel.days_before', 'null']])('a stored %s of %s is refused loudly', (key, valueJson) => {
     expect(() => houseRulesFrom([{ key, valueJson }])).toThrow();
+  });
+  it('a stored table that lacks a mark, or knows one more, is refused loudly', () => {
+    const { no_show, ...lacking } = CONSEQUENCES;
+    for (const table of [lacking, { ...CONSEQUENCES, asleep: no_show }, { ...CONSEQUENCES, no_show: { ...no_show, payBp: { employee: 10_001, contractor: 0 } } }]) {
+      expect(() => houseRulesFrom([{ key: 'attendance.consequences', valueJson: JSON.stringify(table) }])).toThrow();
+    }
+    expect(houseRulesFrom([{ key: 'attendance.consequences', valueJson: JSON.stringify(CONSEQUENCES) }])['attendance.consequences']).toEqual(CONSEQUENCES);
   });
   it('a row of a rule that no longer exists changes nothing', () => expect(houseRulesFrom([{ key: 'old.rule', valueJson: '1' }])).toEqual(houseRulesFrom([])));
 });

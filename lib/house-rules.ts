@@ -1,4 +1,5 @@
 import * as z from 'zod';
+import { CONSEQUENCES, consequencesSchema } from './calendar/consequences';
 
 /**
  * The rules a school decides for itself, each a dated row in `setting_version` with who approved it. A lesson of
@@ -12,6 +13,7 @@ export const HOUSE_RULES = {
   'cancel.days_before': { label: 'Days before a lesson by which an absence must be told', schema: z.number().int().min(0).max(14), value: 1 },
   'credit.cap_per_term': { label: 'Make-up credits a family may earn per enrolment and term', schema: z.number().int().min(0).max(50), value: 2 },
   'credit.valid_days': { label: 'Days within which a make-up lesson must take place', schema: z.number().int().min(1).max(730), value: 60 },
+  'attendance.consequences': { label: 'What each mark means for charge, credit, pay and package', schema: consequencesSchema, value: CONSEQUENCES },
   'tuition.discount_mode': { label: 'Discounts one after the other, or the best one only', schema: z.enum(['one_after_other', 'best_only']), value: 'one_after_other' },
   'tuition.month_rule': { label: 'How a month that is joined part-way is charged', schema: z.enum(['by_lessons', 'by_days', 'half_month']), value: 'by_lessons' },
   'tuition.due_days': { label: 'Days from the invoice to its due date', schema: z.number().int().min(0).max(120), value: 14 },
@@ -22,6 +24,9 @@ export const HOUSE_RULES = {
 } as const;
 
 export type HouseRuleKey = keyof typeof HOUSE_RULES;
+/** A rule that is one number or one choice; the consequence table is a table and has a screen of its own. */
+export type PlainRuleKey = Exclude<HouseRuleKey, 'attendance.consequences'>;
+export const PLAIN_RULE_KEYS = Object.keys(HOUSE_RULES).filter((key): key is PlainRuleKey => key !== 'attendance.consequences');
 export type HouseRules = { [Key in HouseRuleKey]: z.output<(typeof HOUSE_RULES)[Key]['schema']> };
 
 type StoredRule = { key: string; valueJson: string };

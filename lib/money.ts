@@ -90,6 +90,9 @@ export function parseMoney(typed: string, currency: string): number | null {
   return match[1] === '-' && value !== 0 ? -value : value;
 }
 
+/** "12.345" may be twelve thousand or a slip of the finger: where money is taken or promised, nobody guesses. */
+export const isAmbiguousAmount = (typed: string, currency: string): boolean => minorDigitsOf(currency) < 3 && /^\D*\d{1,3}[.,]\d{3}\D*$/.test(typed);
+
 /** The last mark is the decimal mark when 1 to `digits` digits follow it; other marks must group by three. */
 function splitDecimals(text: string, digits: number): [string | null, string] {
   const last = Math.max(text.lastIndexOf('.'), text.lastIndexOf(','));

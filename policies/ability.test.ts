@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { abilityFor, assertCan, may, ROLES } from './ability';
 import { SUBJECTS, type Actor } from './types';
 
-const actor = (over: Partial<Actor>): Actor => ({ userId: 'user', personId: 'person', role: 'guardian', isLead: false, studentIds: [], payerIds: [], familyIds: [], taughtStudentIds: [], ...over });
+const actor = (over: Partial<Actor>): Actor => ({ userId: 'user', personId: 'person', role: 'guardian', isLead: false, studentIds: [], payerIds: [], familyIds: [], taughtStudentIds: [], coveredTodayIds: [], ...over });
 const answerOf = (attempt: () => void): unknown => {
   try {
     attempt();

@@ -36,8 +36,11 @@ const grants: Record<Role, Grant> = {
     const planned: Record<string, string>[] = [{ plannedTeacherId: actor.personId }, { taughtById: actor.personId }];
     for (const mine of planned) {
       allow('read', ['Occurrence', 'Seat'], mine);
-      allow(['read', 'create', 'update'], 'Attendance', mine);
+      allow('read', 'Attendance', mine);
     }
+    // One's own lessons are marked and put right until pay is closed; a lesson taken over, on its day.
+    allow(['create', 'update'], 'Attendance', { plannedTeacherId: actor.personId });
+    allow(['create', 'update'], 'Attendance', { occurrenceId: { $in: [...actor.coveredTodayIds] } });
     // The private note of a hearing and its keys are for those who teach: families read the result in plain words.
     allow('read', ['Progress', 'Hearing', 'HearingNote', 'Practice', 'HealthNote'], taught);
     allow('read', 'Student', { id: { $in: [...actor.taughtStudentIds] } });
@@ -76,9 +79,10 @@ const grants: Record<Role, Grant> = {
   },
 };
 
-/** The lead keeps one standard: sees every student's ladder, agrees to skips and further attempts, asks for a re-check, looks after the rungs. */
+/** The lead keeps one standard: sees every student's ladder, marks what was left unmarked, agrees to skips and further attempts, asks for a re-check, looks after the rungs. */
 function grantLead(actor: Actor, allow: Allow): void {
   allow('read', ['Progress', 'Hearing', 'HearingNote', 'Student', 'Occurrence', 'Seat', 'Practice']);
+  allow(['read', 'create', 'update'], 'Attendance');
   allow(['create', 'update'], 'Hearing', { assessorId: actor.personId });
   allow('approve', ['Hearing', 'Report']);
   allow(['read', 'update'], 'Reach');

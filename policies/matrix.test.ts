@@ -8,12 +8,18 @@ import { accessHouse, contextOfColumn } from '@/tests/factories/access-house';
 import { AppError } from '@/lib/errors';
 import type { Context } from '@/lib/server/context';
 import { instantOf } from '@/lib/time';
+import { addClosure } from '@/lib/calendar/server/add-closure';
+import { addTerm } from '@/lib/calendar/server/add-term';
 import { bookByHand } from '@/lib/calendar/server/book-by-hand';
+import { CONSEQUENCES } from '@/lib/calendar/consequences';
 import { calendarEntries } from '@/lib/calendar/server/calendar-week';
+import { changeConsequence, readConsequences } from '@/lib/calendar/server/change-consequence';
 import { boardLessons } from '@/lib/calendar/server/day-board';
 import { familyLessons, reportAbsence } from '@/lib/calendar/server/family-lessons';
 import { checkIn, markAttendance } from '@/lib/calendar/server/mark-attendance';
 import { readEnquiries } from '@/lib/calendar/server/read-enquiries';
+import { readTerms } from '@/lib/calendar/server/read-terms';
+import { takeClosureAway } from '@/lib/calendar/server/take-closure-away';
 import { takeEnquiryList } from '@/lib/calendar/server/take-enquiry-list';
 import { takeEnquiry } from '@/lib/calendar/server/take-enquiry';
 import { deskEnquirySchema } from '@/lib/calendar/schema';
@@ -27,6 +33,7 @@ import { schoolLadder } from '@/lib/ladder/server/school-ladder';
 import { startHearing } from '@/lib/ladder/server/start-hearing';
 import { askAboutPay, passOverTeacher } from '@/lib/payroll/server/check-pay';
 import { gatherPayRun } from '@/lib/payroll/server/gather-pay-run';
+import { beginRate, readRates } from '@/lib/payroll/server/pay-rates';
 import { payRunScreen } from '@/lib/payroll/server/pay-run-screen';
 import { payWorkbook } from '@/lib/payroll/server/pay-workbook';
 import { teacherPay } from '@/lib/payroll/server/teacher-pay';
@@ -51,7 +58,7 @@ import { tuitionRunDetail } from '@/lib/tuition/server/tuition-run-screen';
 import { COLUMNS, LATER, MATRIX, type BuiltRow, type Column, type RowName, type Verb } from './matrix';
 
 /** What an attempt is about: records of the person’s own, or of a family and a teacher they have nothing to do with. */
-type Target = { studentId: string; familyId: string; payerId: string; engagementId: string; invoiceId: string; seatToday: string; seatNextWeek: string };
+type Target = { studentId: string; familyId: string; payerId: string; engagementId: string; invoiceId: string; seatToday: string; seatNextWeek: string; seatLastMonth: string };
 type Attempt = (context: Context, target: Target) => Promise<unknown>;
 
 let db: Knex;
@@ -72,6 +79,17 @@ const ZONE = 'America/New_York';
 const TODAY = { startsAt: instantOf('2026-11-17', 0, ZONE), endsAt: instantOf('2026-11-18', 0, ZONE) };
 const mark = (attendance: 'present' | 'excused'): Attempt => (context, { seatToday }) =>
   markAttendance({ seatId: seatToday, attendance, minutesLate: null, toldAt: null, toldVia: 'desk', rowVersion: 1 }, context);
+const MARK = { minutesLate: null, toldAt: null, toldVia: 'desk' } as const;
+/** A closed pay run refuses everybody alike, with words of its own. */
+const markLocked: Attempt = async (context, { seatLastMonth }) => {
+  await context.db('occurrence').whereIn('id', context.db('seat').where({ id: seatLastMonth }).select('occurrenceId')).update({ lockedByPayRunId: made.payRunId });
+  try {
+    return await markAttendance({ ...MARK, seatId: seatLastMonth, attendance: 'no_show', rowVersion: 2 }, context);
+  } catch (error) {
+    if (error instanceof AppError && error.code === 'conflict' && error.message.startsWith('This lesson is in a closed pay run.')) return null;
+    throw error;
+  }
+};
 const always = (work: (context: Context) => Promise<unknown>): Attempt => async (context) => { await work(context); return true; };
 
 /** Every list, one after the other: who may take one may take them all, or the grants are crooked. */
@@ -90,6 +108,19 @@ async function takesEveryList(context: Context): Promise<boolean> {
   return taken > 0;
 }
 
+/** A term, a closed day and its taking away: who may do one may do all three. */
+async function changesTerms(context: Context): Promise<void> {
+  const tries = [
+    () => addTerm({ name: 'Summer', startsOn: '2027-07-05', endsOn: '2027-07-30' }, context),
+    () => addClosure({ from: '2027-03-01', until: '2027-03-01', siteId: '', reason: 'Staff day', fromTime: '', toTime: '' }, context),
+    () => takeClosureAway({ closureId: made.closureId }, context),
+  ];
+  const refusals: unknown[] = [];
+  for (const attempt of tries) await attempt().catch((error: unknown) => refusals.push(error));
+  if (refusals.length === tries.length) throw refusals[0];
+  if (refusals.length > 0) throw new Error(`${refusals.length} of ${tries.length} changes of terms were refused`);
+}
+
 /** One attempt for each verb of each row. A record that is not shown, a null and a refusal are all "none". */
 const ATTEMPTS: Record<RowName, Partial<Record<Verb, Attempt>>> = {
   calendar: {
@@ -102,6 +133,9 @@ const ATTEMPTS: Record<RowName, Partial<Record<Verb, Attempt>>> = {
   },
   busyTimes: { read: async (context) => (await calendarEntries({ from: TODAY.startsAt, until: TODAY.endsAt, teacherId: 'viktor' }, context)).some(({ kind }) => kind === 'busy' || kind === 'lesson') },
   attendance: { write: mark('present') },
+  attendanceAfter: { write: (context, { seatLastMonth }) => markAttendance({ ...MARK, seatId: seatLastMonth, attendance: 'no_show', rowVersion: 2 }, context) },
+  attendanceBefore: { write: (context, { seatNextWeek }) => markAttendance({ ...MARK, seatId: seatNextWeek, attendance: 'away_with_notice', rowVersion: 1 }, context) },
+  attendanceLocked: { write: markLocked },
   absence: { write: (context, { seatNextWeek }) => reportAbsence({ seatId: seatNextWeek }, context) },
   arrival: { write: async (context, { seatToday }) => { await checkIn({ seatId: seatToday, hasArrived: true }, context); return true; } },
   excuse: { write: mark('excused') },
@@ -113,6 +147,8 @@ const ATTEMPTS: Record<RowName, Partial<Record<Verb, Attempt>>> = {
   },
   prices: { read: always(readPriceList), write: always((context) => setPrice({ productId: 'lesson', lengthMinutes: 30, amount: '43', validFrom: '2027-01-01' }, context)) },
   houseRules: { read: always(readHouseRules), write: always((context) => changeHouseRule({ key: 'credit.valid_days', value: 90, validFrom: '2027-01-01' }, context)) },
+  consequences: { read: always(readConsequences), write: always((context) => changeConsequence({ mark: 'no_show', consequence: CONSEQUENCES.late_notice, validFrom: '2027-01-01' }, context)) },
+  terms: { read: always(readTerms), write: always(changesTerms) },
   invoice: { read: (context, { invoiceId }) => staffInvoice({ invoiceId }, context) },
   share: { read: (context, { invoiceId }) => payerInvoice({ invoiceId }, context) },
   payment: {
@@ -128,6 +164,10 @@ const ATTEMPTS: Record<RowName, Partial<Record<Verb, Attempt>>> = {
     read: always((context) => payRunScreen({ payRunId: made.payRunId }, context)),
     write: always((context) => gatherPayRun({ payRunId: made.payRunId }, context)),
     approve: always((context) => passOverTeacher({ payRunId: made.payRunId, engagementId: 'engagement-mara', reason: 'On leave' }, { ...context, today: '2026-11-21' })),
+  },
+  rates: {
+    read: always(readRates),
+    write: always((context) => beginRate({ engagementId: 'engagement-mara', workType: 'lesson', lessonTypeId: null, lengthMinutes: 30, seatsFrom: null, seatsTo: null, per: 'lesson', amount: '25', validFrom: '2027-01-01' }, context)),
   },
   payLines: {
     read: (context, { engagementId }) => teacherPay({ payRunId: made.payRunId, engagementId }, context),
@@ -169,7 +209,7 @@ async function targetOf(column: Column, whose: 'own' | 'foreign'): Promise<Targe
   const seats: { id: string; localDate: string }[] = await db('seat as s').join('occurrence as o', 'o.id', 's.occurrenceId').where({ studentId }).select('s.id', 'o.localDate');
   const invoice = await db<{ id: string; familyId: string }>('invoice').where({ familyId: family.familyId }).first('id');
   const seatOn = (date: string) => seats.find(({ localDate }) => localDate === date)!.id;
-  return { studentId, ...family, engagementId: whose === 'own' ? own.engagementId : own.foreignEngagementId, invoiceId: invoice!.id, seatToday: seatOn('2026-11-17'), seatNextWeek: seatOn('2026-11-24') };
+  return { studentId, ...family, engagementId: whose === 'own' ? own.engagementId : own.foreignEngagementId, invoiceId: invoice!.id, seatToday: seatOn('2026-11-17'), seatNextWeek: seatOn('2026-11-24'), seatLastMonth: seatOn('2026-10-06') };
 }
 
 class Undone extends Error {}

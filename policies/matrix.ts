@@ -33,9 +33,18 @@ export const MATRIX = {
     cells: { ...NOBODY, owner: readAll, desk: readAll, teacher: readAll, substitute: readAll, lead: readAll },
   },
   attendance: {
-    thing: 'Attendance of a lesson, until its pay run is closed', tries: ['write'],
-    cells: { ...NOBODY, owner: writeAll, desk: writeAll, teacher: writeOwn, substitute: writeOwn, lead: writeOwn },
+    thing: 'Attendance of a lesson of today', tries: ['write'],
+    cells: { ...NOBODY, owner: writeAll, desk: writeAll, teacher: writeOwn, substitute: writeOwn, lead: writeAll },
   },
+  attendanceAfter: {
+    thing: 'Attendance of an earlier lesson, until its pay run is closed', tries: ['write'],
+    cells: { ...NOBODY, owner: writeAll, desk: writeAll, teacher: writeOwn, lead: writeAll },
+  },
+  attendanceBefore: {
+    thing: 'An absence told for a lesson to come, taken down by the school', tries: ['write'],
+    cells: { ...NOBODY, owner: writeAll, desk: writeAll, teacher: writeOwn, lead: writeAll },
+  },
+  attendanceLocked: { thing: 'Attendance of a lesson in a closed pay run', tries: ['write'], cells: NOBODY },
   absence: {
     thing: 'Telling on the screen that a lesson will be missed', tries: ['write'],
     cells: { ...NOBODY, owner: writeAll, desk: writeAll, student: writeOwn, guardian: writeOwn },
@@ -50,11 +59,14 @@ export const MATRIX = {
   enquiries: { thing: 'Enquiries', tries: ['read', 'write'], cells: { ...NOBODY, owner: readAndWriteAll, desk: readAndWriteAll } },
   prices: { thing: 'Prices', tries: ['read', 'write'], cells: { ...NOBODY, owner: readAndWriteAll, desk: readAll } },
   houseRules: { thing: 'House rules', tries: ['read', 'write'], cells: { ...NOBODY, owner: readAndWriteAll } },
+  consequences: { thing: 'What each mark means for charge, credit and pay', tries: ['read', 'write'], cells: { ...NOBODY, owner: readAndWriteAll } },
+  terms: { thing: 'Terms and closed days', tries: ['read', 'write'], cells: { ...NOBODY, owner: readAndWriteAll, desk: readAll, teacher: readAll, substitute: readAll, lead: readAll } },
   invoice: { thing: 'Invoice of a family, all shares', tries: ['read'], cells: { ...NOBODY, owner: readAll, desk: readAll } },
   share: { thing: 'One’s own share of an invoice', tries: ['read'], cells: { ...NOBODY, student: readOwn, guardian: readOwn } },
   payment: { thing: 'Payment taken at the desk', tries: ['read', 'write'], cells: { ...NOBODY, owner: readAndWriteAll, desk: readAndWriteAll } },
   tuitionRun: { thing: 'Tuition run', tries: ['read', 'write', 'approve'], cells: { ...NOBODY, owner: [...readAndWriteAll, 'approve all'], desk: readAll } },
   payRun: { thing: 'Pay run', tries: ['read', 'write', 'approve'], cells: { ...NOBODY, owner: [...readAndWriteAll, 'approve all'] } },
+  rates: { thing: 'Pay rates of every teacher', tries: ['read', 'write'], cells: { ...NOBODY, owner: readAndWriteAll } },
   payLines: {
     thing: 'A teacher’s pay lines, and a question about them', tries: ['read', 'write'],
     cells: { ...NOBODY, owner: readAndWriteAll, teacher: readAndWriteOwn, substitute: readAndWriteOwn, lead: readAndWriteOwn },

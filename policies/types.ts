@@ -15,6 +15,8 @@ export type Actor = {
   familyIds: readonly string[];
   /** For a teacher: students of their live enrolments, and those they cover today. */
   taughtStudentIds: readonly string[];
+  /** For a teacher: lessons of colleagues they take over today. */
+  coveredTodayIds: readonly string[];
 };
 
 /** To manage is to read, create, update and approve. Taking lists out of the house ('export') is granted on its own, always. */

@@ -9,7 +9,7 @@ import { SUBJECTS, type Action, type Actor, type AppAbility, type SubjectName } 
 import { allowedRows } from './where';
 
 const ACTIONS: Action[] = ['read', 'create', 'update', 'approve', 'manage', 'export'];
-const FIELDS = ['id', 'studentId', 'payerId', 'personId', 'actorId', 'assessorId', 'plannedTeacherId', 'taughtById', 'askedByUserId', 'familyId'] as const;
+const FIELDS = ['id', 'studentId', 'payerId', 'personId', 'actorId', 'assessorId', 'plannedTeacherId', 'taughtById', 'askedByUserId', 'familyId', 'occurrenceId'] as const;
 /** Ids that differ by case, by a space or by a sign, an empty one and a hostile one. */
 const IDS = ['ada', 'Ada', 'ada ', 'ben', 'theo', 'mara', 'é', '漢', '', "x' OR 1=1 --", '%', '1'];
 type Row = Record<(typeof FIELDS)[number], string | null> & { rowNo: number };
@@ -33,7 +33,7 @@ const byMemory = (rows: readonly Row[], ability: AppAbility, action: Action, nam
 
 const someIds = fc.subarray(IDS, { maxLength: 4 });
 const anyActor: fc.Arbitrary<Omit<Actor, 'role'>> = fc.record({
-  userId: fc.constantFrom(...IDS), personId: fc.constantFrom(...IDS), isLead: fc.boolean(), studentIds: someIds, payerIds: someIds, familyIds: someIds, taughtStudentIds: someIds,
+  userId: fc.constantFrom(...IDS), personId: fc.constantFrom(...IDS), isLead: fc.boolean(), studentIds: someIds, payerIds: someIds, familyIds: someIds, taughtStudentIds: someIds, coveredTodayIds: someIds,
 });
 
 describe('a list shows exactly the records that may be opened one by one', () => {

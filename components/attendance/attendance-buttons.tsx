@@ -3,7 +3,7 @@
 import { useState, useTransition } from 'react';
 import { toast } from 'sonner';
 import { Chip } from '@/components/ui/chip';
-import { ATTENDANCE_WORDS, CONSEQUENCES, type MarkedAttendance } from '@/lib/calendar/attendance';
+import { ATTENDANCE_WORDS, isTaught, type MarkedAttendance } from '@/lib/calendar/attendance';
 import type { BoardSeat } from '@/lib/calendar/server/day-board';
 import type { MarkAction } from './mark-action';
 
@@ -42,7 +42,7 @@ export function AttendanceButtons({ mark, seat, onChange }: AttendanceButtonsPro
         <option value="" disabled>Other…</option>
         {MORE.map(({ attendance, label }) => <option key={attendance} value={attendance}>{label}</option>)}
       </select>
-      {shown.attendance === 'expected' ? null : <Chip tone={CONSEQUENCES[shown.attendance].taught ? 'ok' : 'neutral'}>{ATTENDANCE_WORDS[shown.attendance]}</Chip>}
+      {shown.attendance === 'expected' ? null : <Chip tone={isTaught(shown.attendance) ? 'ok' : 'neutral'}>{ATTENDANCE_WORDS[shown.attendance]}</Chip>}
     </div>
   );
 }

@@ -8,6 +8,6 @@ export const ownerAt = ({ owner, zone }: House, now: EpochSeconds): Context => (
 
 /** A teacher at an earlier moment, with the students taught then. */
 export function teacherAt(house: House, personId: string, taughtStudentIds: readonly string[], now: EpochSeconds): Context {
-  const actor: Actor = { userId: `demo-${personId}`, personId, role: 'teacher', isLead: false, studentIds: [], payerIds: [], familyIds: [], taughtStudentIds };
+  const actor: Actor = { userId: `demo-${personId}`, personId, role: 'teacher', isLead: false, studentIds: [], payerIds: [], familyIds: [], taughtStudentIds, coveredTodayIds: [] };
   return { ...ownerAt(house, now), actor, ability: abilityFor(actor) };
 }

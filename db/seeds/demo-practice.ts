@@ -47,6 +47,6 @@ async function keepMinutes(house: House, { student }: DemoSlot): Promise<void> {
 }
 
 function studentAt(house: House, personId: string, now: number): Context {
-  const actor: Actor = { userId: `demo-${personId}`, personId, role: 'student', isLead: false, studentIds: [personId], payerIds: [], familyIds: [], taughtStudentIds: [] };
+  const actor: Actor = { userId: `demo-${personId}`, personId, role: 'student', isLead: false, studentIds: [personId], payerIds: [], familyIds: [], taughtStudentIds: [], coveredTodayIds: [] };
   return { ...ownerAt(house, now), actor, ability: abilityFor(actor) };
 }

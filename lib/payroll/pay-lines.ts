@@ -1,4 +1,5 @@
 import { ATTENDANCE_WORDS, type Attendance, type MarkedAttendance } from '../calendar/attendance';
+import type { DatedConsequences } from '../calendar/consequences';
 import { say, sayPercent, type MoneyWords } from '../explained';
 import { BASIS_POINTS, percentOf, ratioOf } from '../money';
 import type { LocalDate, MinuteOfDay } from '../time';
@@ -15,7 +16,7 @@ export type LessonFacts = {
   planned: Worker | null; taughtBy: Worker | null;
   seats: readonly { studentName: string; attendance: Attendance; countsForSize: boolean }[];
 };
-export type PayFacts = { rates: readonly PayRate[]; rules: readonly PayRule[]; words: MoneyWords };
+export type PayFacts = { rates: readonly PayRate[]; rules: readonly PayRule[]; consequences: readonly DatedConsequences[]; words: MoneyWords };
 
 /** One amount with everything that explains it. `problem` is said in words and stands for no amount at all. */
 export type PayLine = {
@@ -48,9 +49,9 @@ const sizeOf = ({ seats }: LessonFacts): Size => {
 };
 
 /** The share that the marks pay: of a group the best-paying mark counts, because the class was held or waited for. */
-function shareOf(lesson: LessonFacts, worker: Worker, rules: readonly PayRule[]): { bp: number; mark: MarkedAttendance } {
+function shareOf(lesson: LessonFacts, worker: Worker, consequences: readonly DatedConsequences[]): { bp: number; mark: MarkedAttendance } {
   const marks = lesson.seats.map(({ attendance }) => attendance).filter((mark): mark is MarkedAttendance => mark !== 'expected');
-  return marks.map((mark) => ({ mark, bp: payShareBp(mark, worker.kind, lesson.localDate, rules) })).reduce((best, share) => (share.bp > best.bp ? share : best));
+  return marks.map((mark) => ({ mark, bp: payShareBp(mark, worker.kind, lesson.localDate, consequences) })).reduce((best, share) => (share.bp > best.bp ? share : best));
 }
 
 function rateFor(lesson: LessonFacts, worker: Worker, rates: readonly PayRate[]): RateAnswer {
@@ -71,10 +72,10 @@ const rateWords = (rate: PayRate, words: MoneyWords) => `${say(rate.amountMinor,
 const whatOf = (lesson: LessonFacts) => `${lesson.lengthMinutes} min ${lesson.workType === 'group' ? sizeOf(lesson).text : lesson.label.toLowerCase()}`;
 const studentsOf = ({ seats, workType, label }: LessonFacts) => (workType === 'group' ? label : seats.map(({ studentName }) => studentName).join(', '));
 
-function ownLine(lesson: LessonFacts, worker: Worker, { rates, rules, words }: PayFacts): PayLine {
+function ownLine(lesson: LessonFacts, worker: Worker, { rates, consequences, words }: PayFacts): PayLine {
   const { rate, problem } = rateFor(lesson, worker, rates);
   if (!rate) return problemLine(lesson, worker, problem);
-  const { bp, mark } = shareOf(lesson, worker, rules);
+  const { bp, mark } = shareOf(lesson, worker, consequences);
   const amountMinor = sharedAmount(rate, lesson.lengthMinutes, bp);
   const isTaught = bp === BASIS_POINTS;
   const share = isTaught ? '' : ` × ${sayPercent(bp)} (${ATTENDANCE_WORDS[mark]})`;
@@ -91,7 +92,7 @@ function substituteLine(lesson: LessonFacts, worker: Worker, absent: Worker, fac
   const theirs = rateFor(lesson, absent, facts.rates);
   const own = isGroup ? theirs : rateFor(lesson, worker, facts.rates);
   if (!own.rate) return problemLine(lesson, worker, own.problem);
-  const { bp } = shareOf(lesson, worker, facts.rules);
+  const { bp } = shareOf(lesson, worker, facts.consequences);
   const full = fullAmount(own.rate, lesson.lengthMinutes);
   const floorBp = substituteShareBp(worker.kind, lesson.localDate, facts.rules);
   const floor = isGroup || floorBp === null || !theirs.rate ? null : { bp: floorBp, minor: percentOf(fullAmount(theirs.rate, lesson.lengthMinutes), floorBp) };

@@ -6,6 +6,10 @@ export const WORK_WORDS: Record<WorkType, string> = {
   admin: 'Office work', training: 'Training', travel: 'Travel between sites', mileage: 'Mileage',
 };
 
+/** What kind of work a kind of lesson is; what is not here is paid by the hour through time entries. */
+export const WORK_OF_LESSON: Record<string, WorkType> = { single: 'lesson', make_up: 'lesson', trial: 'trial', group: 'group', ensemble: 'group', workshop: 'group', drop_in: 'group' };
+export const isTaughtWork = (workType: WorkType): boolean => workType === 'lesson' || workType === 'group' || workType === 'trial';
+
 export type PayRate = {
   id: string; engagementId: string; workType: WorkType;
   /** Each of these narrows the row; null fits everything. */

@@ -28,7 +28,7 @@ const [LAST_MONTH, TODAY, NEXT_WEEK] = ['2026-10-06', '2026-11-17', '2026-11-24'
  * The worked-example school at work, for the access matrix: Ada is taught by Mara, Ben’s lessons up to today are
  * covered by Leo, Theo is grown and pays for himself, and Uma, taught by Viktor, is a stranger to everybody else.
  */
-export async function accessHouse(db: Knex): Promise<{ runId: string; payRunId: string; rungId: string }> {
+export async function accessHouse(db: Knex): Promise<{ runId: string; payRunId: string; rungId: string; closureId: string }> {
   await lanternStreet(db);
   await lanternMoney(db);
   await lanternPay(db);
@@ -51,7 +51,8 @@ export async function accessHouse(db: Knex): Promise<{ runId: string; payRunId: 
   }
   await db('seat').whereIn('occurrenceId', db('occurrence').where({ localDate: LAST_MONTH }).select('id')).update({ attendance: 'present', markedAt: 1, rowVersion: 2 });
   await db('occurrence').whereIn('localDate', [TODAY, LAST_MONTH]).whereIn('id', db('seat').where({ studentId: 'ben' }).select('occurrenceId')).update({ taughtById: 'leo' });
-  return { ...(await runs(db)), rungId: await firstRung(db) };
+  const [closure]: { id: string }[] = await db('closure').where({ closedOn: '2027-05-31' }).select('id');
+  return { ...(await runs(db)), rungId: await firstRung(db), closureId: closure?.id ?? '' };
 }
 
 async function runs(db: Knex): Promise<{ runId: string; payRunId: string }> {

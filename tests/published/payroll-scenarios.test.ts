@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import type { Attendance } from '@/lib/calendar/attendance';
 import { sumOf } from '@/lib/money';
+import { CONSEQUENCES } from '@/lib/calendar/consequences';
 import { payLineOfMileage, payLineOfTime, payLinesOfLesson, type LessonFacts, type Worker } from '@/lib/payroll/pay-lines';
 import { payShareBp, type PayRule } from '@/lib/payroll/pay-rules';
 import { payTotalsOf, summaryOf } from '@/lib/payroll/pay-totals';
@@ -25,7 +26,7 @@ const RATES: PayRate[] = [
   rate('mara', { workType: 'travel', amountMinor: 1800, per: 'hour' }),
 ];
 const RULES: PayRule[] = [{ kind: 'substitute', engagementKind: null, value: { ofAbsentRateBp: 9000 }, validFrom: '2026-01-01', validTo: null }];
-const facts = { rates: RATES, rules: RULES, words };
+const facts = { rates: RATES, rules: RULES, consequences: [], words };
 
 const lesson = (lengthMinutes: number, attendance: Attendance, over: Partial<LessonFacts> = {}): LessonFacts => ({
   occurrenceId: `lesson-${ids++}`, localDate: '2026-10-06', startMin: 960, lengthMinutes, lessonTypeId: 'single', workType: 'lesson', label: 'Single lesson', siteId: 'quay',
@@ -105,8 +106,9 @@ describe('what cannot be paid is said, never guessed', () => {
   });
 });
 
-it('a dated rule of the school judges lessons of its own days only', () => {
-  const rules: PayRule[] = [{ kind: 'absence', engagementKind: 'employee', value: { late_notice: 7500 }, validFrom: '2026-10-06', validTo: '2026-11-01' }];
-  const share = (on: string, kind: 'employee' | 'contractor' = 'employee') => payShareBp('late_notice', kind, on, rules);
+it('a dated table of the school judges lessons of its own days only', () => {
+  const table = { ...CONSEQUENCES, late_notice: { ...CONSEQUENCES.late_notice, payBp: { employee: 7500, contractor: 5000 } } };
+  const dated = [{ validFrom: '2026-10-06', validTo: '2026-11-01', table }];
+  const share = (on: string, kind: 'employee' | 'contractor' = 'employee') => payShareBp('late_notice', kind, on, dated);
   expect([share('2026-10-05'), share('2026-10-06'), share('2026-10-31'), share('2026-11-01'), share('2026-10-06', 'contractor')]).toEqual([5000, 7500, 7500, 5000, 5000]);
 });

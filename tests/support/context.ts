@@ -18,7 +18,7 @@ export function contextOf(db: Db, role: Role, over: Over = {}): Context {
   const { now = NOW, school: schoolOver, ...actorOver } = over;
   const school = { ...SCHOOL, ...schoolOver };
   const actor: Actor = {
-    userId: `user-${role}`, personId: role, role, isLead: false, studentIds: [], payerIds: [], familyIds: [], taughtStudentIds: [], ...actorOver,
+    userId: `user-${role}`, personId: role, role, isLead: false, studentIds: [], payerIds: [], familyIds: [], taughtStudentIds: [], coveredTodayIds: [], ...actorOver,
   };
   return { db, actor, ability: abilityFor(actor), now, today: localDateOf(now, school.zone), school };
 }

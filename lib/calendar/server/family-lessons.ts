@@ -12,7 +12,7 @@ import { formatDate } from '@/lib/format';
 import type { Context } from '@/lib/server/context';
 import { addDays } from '@/lib/time';
 import { assertCan, may } from '@/policies/ability';
-import { creditFor } from '../credit';
+import { creditFor, creditRulesOf } from '../credit';
 import { absenceKind } from '../lesson-time';
 import { recordMark, settleCredit } from './record-mark';
 
@@ -39,9 +39,11 @@ export async function absenceEffect({ seatId }: { seatId: string }, { db, abilit
   const inTime = kind === 'away_with_notice';
   const [rules, term] = [await houseRulesOn(db, seat.localDate), await termOn(db, seat.localDate)];
   const capped = seat.enrolmentId ? await countCappedCredits(db, seat.enrolmentId, term?.startsOn ?? seat.localDate, term?.endsOn ?? seat.localDate) : 0;
-  const verdict = creditFor(kind, seat.localDate, capped, { capPerTerm: rules['credit.cap_per_term'], validDays: rules['credit.valid_days'] });
+  const verdict = creditFor(kind, seat.localDate, capped, creditRulesOf(rules));
   const credit = verdict.credit ? `${seat.lengthMinutes} minutes to make up, by ${formatDate(verdict.credit.lastOn, school.locale, 'day')}.` : verdict.sentence;
-  return { inTime, sentences: [inTime ? 'You are telling us in good time.' : 'The time to tell us has passed, so no make-up lesson follows.', ...(inTime ? [credit] : []), 'The lesson stays on the bill.'] };
+  const late = verdict.credit ? ['The time to tell us has passed.', credit] : ['The time to tell us has passed, so no make-up lesson follows.'];
+  const bill = rules['attendance.consequences'][kind].charged ? 'The lesson stays on the bill.' : 'Where lessons are paid one by one, this one is not charged.';
+  return { inTime, sentences: [...(inTime ? ['You are telling us in good time.', credit] : late), bill] };
 }
 
 /** A guardian, or an adult student, says that a lesson will be missed. The deadline decides what follows. */

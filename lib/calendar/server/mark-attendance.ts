@@ -5,7 +5,7 @@ import { findSeat, setArrived, type SeatWithLesson } from '@/db/seats';
 import { transaction } from '@/db/transaction';
 import { AppError, notFound } from '@/lib/errors';
 import type { Context } from '@/lib/server/context';
-import { assertCan } from '@/policies/ability';
+import { assertCan, may } from '@/policies/ability';
 import { ATTENDANCE_WORDS, type Attendance, type MarkedAttendance } from '../attendance';
 import { absenceKind } from '../lesson-time';
 import type { markAttendanceSchema } from '../schema';
@@ -21,13 +21,14 @@ const ABSENCES: readonly MarkedAttendance[] = ['away_with_notice', 'late_notice'
 /**
  * Records the one fact from which charge, credit, pay, package and progress follow. An absence told before the
  * deadline is "told in time" whoever types it in and when. A mark may be put right until the lesson is in a
- * closed pay run.
+ * closed pay run: by the teacher of the lesson, the lead and the desk. Who took it over for a day marks it on that day
+ * (job map, appendix 2).
  */
 export async function markAttendance(input: Marking, context: Context): Promise<Marked> {
   const { db, now, actor } = context;
   const seat = await findSeat(db, input.seatId);
   if (!seat) throw notFound('lesson');
-  assertCan(context.ability, 'update', 'Attendance', seat);
+  assertMayMark(seat, context);
   if (input.attendance === 'excused') assertCan(context.ability, 'update', 'Excuse', seat);
   assertMarkable(seat, input.attendance, now);
   const toldAt = input.toldAt ?? now;
@@ -46,6 +47,14 @@ export async function markAttendance(input: Marking, context: Context): Promise<
     });
     return { attendance, rowVersion: input.rowVersion + 1, sentence, lessonState };
   });
+}
+
+function assertMayMark(seat: SeatWithLesson, { ability, actor, today }: Context): void {
+  const isCover = seat.taughtById === actor.personId && seat.plannedTeacherId !== actor.personId;
+  if (isCover && seat.localDate !== today && !may(ability, 'update', 'Attendance', seat)) {
+    throw new AppError('forbidden', 'A lesson you took over is marked on its own day. The front desk can put it right for you.');
+  }
+  assertCan(ability, 'update', 'Attendance', seat);
 }
 
 function assertMarkable(seat: SeatWithLesson, attendance: MarkedAttendance, now: number): void {

@@ -8,7 +8,7 @@ import { termOn } from '@/db/terms';
 import { AppError } from '@/lib/errors';
 import { newId } from '@/lib/server/ids';
 import { stateWhenMarked, type MarkedAttendance } from '../attendance';
-import { creditFor, type CreditVerdict } from '../credit';
+import { creditFor, creditRulesOf, type CreditVerdict } from '../credit';
 
 /** Writes the mark and lets the lesson's own state follow; refuses when somebody else marked it meanwhile. */
 export async function recordMark(trx: Trx, seat: SeatWithLesson, mark: Mark, rowVersion: number): Promise<'taught' | 'not_taught' | null> {
@@ -42,5 +42,5 @@ async function takeBack(trx: Trx, creditId: string): Promise<void> {
 async function creditVerdict(trx: Trx, seat: SeatWithLesson, enrolmentId: string, attendance: MarkedAttendance): Promise<CreditVerdict> {
   const [rules, term] = [await houseRulesOn(trx, seat.localDate), await termOn(trx, seat.localDate)];
   const capped = await countCappedCredits(trx, enrolmentId, term?.startsOn ?? seat.localDate, term?.endsOn ?? seat.localDate);
-  return creditFor(attendance, seat.localDate, capped, { capPerTerm: rules['credit.cap_per_term'], validDays: rules['credit.valid_days'] });
+  return creditFor(attendance, seat.localDate, capped, creditRulesOf(rules));
 }

@@ -5,6 +5,7 @@ import { changeImportBatch, dropUpload, findImportBatch, setImportTargets, type 
 import { sealMade, type Made } from '@/db/imports-made';
 import { insertTerm } from '@/db/terms';
 import { transaction } from '@/db/transaction';
+import { yearLabelOf } from '@/lib/calendar/term';
 import { AppError, notFound } from '@/lib/errors';
 import { listOf, plural } from '@/lib/format';
 import type { Context } from '@/lib/server/context';
@@ -90,13 +91,7 @@ async function termFor(trx: Trx, { termId, newTerm }: ImportChoices, { today }: 
   if (!newTerm) return termId ?? '';
   const id = newId();
   made.push({ table: 'term', id, sheet: '', rowNo: 0 });
-  const yearLabel = yearOf(newTerm.startsOn);
+  const yearLabel = yearLabelOf(newTerm.startsOn);
   await insertTerm(trx, { id, ...newTerm, yearLabel, state: newTerm.startsOn <= today ? 'published' : 'planned' });
   return id;
-}
-
-/** "2026/27" for a term that begins in the second half of a year, "2026/27" too for one early in 2027. */
-function yearOf(date: string): string {
-  const year = Number(date.slice(0, 4)) - (Number(date.slice(5, 7)) < 8 ? 1 : 0);
-  return `${year}/${String((year + 1) % 100).padStart(2, '0')}`;
 }

@@ -3,13 +3,12 @@ import type { Db } from '@/db/connection';
 import { approvedMileage, approvedTime, engagementsIn, lessonsBegun, seatsOfLessons, type Engagement, type PaySeat, type TaughtLesson } from '@/db/pay-facts';
 import { allPayRates, allPayRules } from '@/db/pay-rates';
 import type { PayRunWithPeriod } from '@/db/pay-runs';
+import { datedConsequences } from '@/db/settings';
 import type { MoneyWords } from '@/lib/explained';
 import type { EpochSeconds, LocalDate } from '@/lib/time';
 import { payLineOfMileage, payLineOfTime, payLinesOfLesson, type LessonFacts, type PayLine } from '../pay-lines';
-import type { WorkType } from '../rates';
+import { WORK_OF_LESSON } from '../rates';
 
-/** What kind of work a kind of lesson is; what is not here is paid by the hour through time entries. */
-const WORK_OF: Record<string, WorkType> = { single: 'lesson', make_up: 'lesson', trial: 'trial', group: 'group', ensemble: 'group', workshop: 'group', drop_in: 'group' };
 /** Visitors from another class and make-up guests do not change a class's size. */
 const SIZED = new Set(['roster', 'drop_in', 'trial']);
 
@@ -20,7 +19,7 @@ export async function workOutPay(db: Db, run: Pick<PayRunWithPeriod, 'startsOn' 
   const period = { from: run.startsOn, to: run.endsOn };
   const engagements = await engagementsIn(db, period);
   const own = new Set(engagements.filter(({ legalEntityId, kind }) => legalEntityId === run.legalEntityId && kind === run.engagementKind).map(({ engagementId }) => engagementId));
-  const facts = { rates: await allPayRates(db), rules: await allPayRules(db), words };
+  const facts = { rates: await allPayRates(db), rules: await allPayRules(db), consequences: await datedConsequences(db), words };
   const seats = seatsByLesson(await seatsOfLessons(db, period));
   const lessons = (await lessonsBegun(db, period, now)).flatMap((lesson) => {
     const known = lessonFacts(lesson, seats.get(lesson.occurrenceId) ?? [], engagements);
@@ -43,7 +42,7 @@ function seatsByLesson(seats: readonly PaySeat[]): Map<string, PaySeat[]> {
 
 /** Null for what pays nothing by itself: no seats, or cancelled before anybody was marked. */
 function lessonFacts(lesson: TaughtLesson, seats: readonly PaySeat[], engagements: readonly Engagement[]): LessonFacts | null {
-  const workType = WORK_OF[lesson.code];
+  const workType = WORK_OF_LESSON[lesson.code];
   if (!workType || seats.length === 0) return null;
   if (lesson.state === 'cancelled' && seats.some(({ attendance }) => attendance === 'expected')) return null;
   const workerOf = (personId: string | null) => (personId === null ? null : engagementOf(engagements, { personId, on: lesson.localDate, legalEntityId: lesson.legalEntityId }));

@@ -4,14 +4,13 @@ import { recordAudit } from '@/db/audit';
 import { houseRuleHistory, houseRulesOn, setHouseRule, type HouseRuleRow } from '@/db/settings';
 import { transaction } from '@/db/transaction';
 import { AppError } from '@/lib/errors';
-import { HOUSE_RULES, type HouseRuleKey, type HouseRules } from '@/lib/house-rules';
+import { HOUSE_RULES, PLAIN_RULE_KEYS, type HouseRules } from '@/lib/house-rules';
 import type { Context } from '@/lib/server/context';
 import { newId } from '@/lib/server/ids';
 import { isLocalDate } from '@/lib/time';
 import { assertCan } from '@/policies/ability';
 
-const KEYS = Object.keys(HOUSE_RULES) as [HouseRuleKey, ...HouseRuleKey[]];
-export const changeRuleSchema = z.object({ key: z.enum(KEYS), value: z.union([z.number(), z.string().max(40)], 'Enter a value.'), validFrom: z.string().refine(isLocalDate, 'Enter a date.') });
+export const changeRuleSchema = z.object({ key: z.enum(PLAIN_RULE_KEYS), value: z.union([z.number(), z.string().max(40)], 'Enter a value.'), validFrom: z.string().refine(isLocalDate, 'Enter a date.') });
 
 export async function readHouseRules({ db, ability, today }: Context): Promise<{ rules: HouseRules; history: HouseRuleRow[] }> {
   assertCan(ability, 'read', 'Settings', {});

@@ -3,9 +3,10 @@ import type { Db } from '@/db/connection';
 import { awardsOn, discountRulesOn, type DiscountRow } from '@/db/discounts';
 import { payersOfFamilies, splitRulesOn, type FamilySplit, type Payer } from '@/db/payers';
 import { liveProducts, priceList, taxRatesOn, type Product, type TaxRateRow } from '@/db/prices';
-import { houseRulesOn } from '@/db/settings';
+import { datedConsequences, houseRulesOn } from '@/db/settings';
 import { closuresBetween } from '@/db/terms';
 import { billedTuition, enrolmentsIn, lastRunLines, onceOnlyCharges, seatsIn, type BilledEnrolment, type BilledSeat } from '@/db/tuition-facts';
+import type { DatedConsequences } from '@/lib/calendar/consequences';
 import type { Closure } from '@/lib/calendar/term';
 import type { HouseRules } from '@/lib/house-rules';
 import type { LocalDate } from '@/lib/time';
@@ -19,7 +20,7 @@ export type Manner = { locale: string; zone: string };
 
 /** Everything that the bills of a period are worked out from, read once. */
 export type BillingFacts = {
-  period: BillingPeriod; plan: InstalmentPlan; manner: Manner; rules: HouseRules;
+  period: BillingPeriod; plan: InstalmentPlan; manner: Manner; rules: HouseRules; consequences: DatedConsequences[];
   enrolments: BilledEnrolment[]; seats: Map<string, BilledSeat[]>; closures: Closure[];
   products: Product[]; prices: PriceRow[]; taxRates: TaxRateRow[];
   discounts: DiscountRow[]; awards: Award[]; splits: FamilySplit[]; payers: Map<string, Payer[]>;
@@ -31,7 +32,7 @@ export async function readBillingFacts(db: Db, period: BillingPeriod, plan: Inst
   const enrolments = await enrolmentsIn(db, period);
   const [billed, once] = [await billedTuition(db, period), await onceOnlyCharges(db)];
   return {
-    period, plan, manner, rules: await houseRulesOn(db, period.from), enrolments,
+    period, plan, manner, rules: await houseRulesOn(db, period.from), consequences: await datedConsequences(db), enrolments,
     seats: groupBy(await seatsIn(db, period), ({ enrolmentId }) => enrolmentId), closures: await closuresBetween(db, period.from, period.to),
     products: await liveProducts(db), prices: await priceList(db), taxRates: await taxRatesOn(db, period.from),
     discounts: await discountRulesOn(db, period.from), awards: await awardsOn(db, period.from), splits: await splitRulesOn(db, period.from),

@@ -1,7 +1,7 @@
 import 'server-only';
 import type { Product } from '@/db/prices';
 import type { BilledEnrolment, BilledSeat } from '@/db/tuition-facts';
-import { CONSEQUENCES, type Attendance } from '@/lib/calendar/attendance';
+import { consequencesOn } from '@/lib/calendar/consequences';
 import { closedDatesFor } from '@/lib/calendar/term';
 import type { MoneyWords } from '@/lib/explained';
 import { localDateOf, type LocalDate } from '@/lib/time';
@@ -60,7 +60,7 @@ const isBilledBefore = ({ id, familyId, tuitionModel }: BilledEnrolment, { bille
 function tuitionLines(enrolment: BilledEnrolment, gathering: Gathering): DraftLine[] {
   const { facts, words, problems } = gathering;
   if (isBilledBefore(enrolment, facts)) return [];
-  const seats = chargeableSeats(enrolment, facts.seats.get(enrolment.id) ?? []);
+  const seats = chargeableSeats(enrolment, facts);
   const { product, unitMinor } = priceFor(enrolment, seats[0]?.localDate ?? facts.period.from, facts);
   const charged = enrolmentFacts(enrolment, seats, unitMinor ?? 0, facts);
   const charge = chargeFor(charged, { monthRule: facts.rules['tuition.month_rule'], words });
@@ -87,11 +87,11 @@ function priceFor(enrolment: BilledEnrolment, on: LocalDate, { products, prices 
   return { product, unitMinor: enrolment.unitPriceMinor ?? listed };
 }
 
-/** Lesson by lesson, what was marked and is charged for; otherwise every planned lesson. */
-function chargeableSeats(enrolment: BilledEnrolment, seats: readonly BilledSeat[]): BilledSeat[] {
-  const own = seats.filter(({ localDate }) => localDate >= enrolment.startsOn && (enrolment.endsOn === null || localDate <= enrolment.endsOn));
+/** Lesson by lesson, what was marked and is charged for by the table of its day; otherwise every planned lesson. */
+function chargeableSeats(enrolment: BilledEnrolment, facts: BillingFacts): BilledSeat[] {
+  const own = (facts.seats.get(enrolment.id) ?? []).filter(({ localDate }) => localDate >= enrolment.startsOn && (enrolment.endsOn === null || localDate <= enrolment.endsOn));
   if (enrolment.tuitionModel !== 'per_lesson') return own;
-  return own.filter(({ isBilled, attendance }) => isBilled === 0 && attendance !== 'expected' && CONSEQUENCES[attendance as Exclude<Attendance, 'expected'>].charged);
+  return own.filter(({ isBilled, attendance, localDate }) => isBilled === 0 && attendance !== 'expected' && consequencesOn(facts.consequences, localDate)[attendance].charged);
 }
 
 function enrolmentFacts(enrolment: BilledEnrolment, seats: readonly BilledSeat[], unitMinor: number, { period, closures }: BillingFacts): EnrolmentFacts {

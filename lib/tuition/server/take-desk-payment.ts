@@ -6,7 +6,7 @@ import { paymentByKey } from '@/db/payments';
 import { transaction } from '@/db/transaction';
 import { say } from '@/lib/explained';
 import { AppError, notFound } from '@/lib/errors';
-import { minorDigitsOf, parseMoney, sumOf } from '@/lib/money';
+import { isAmbiguousAmount, parseMoney, sumOf } from '@/lib/money';
 import type { Context } from '@/lib/server/context';
 import { addDays } from '@/lib/time';
 import { assertCan } from '@/policies/ability';
@@ -37,11 +37,8 @@ export async function takeDeskPayment(input: Taking, context: Context): Promise<
   });
 }
 
-/** "12.345" may be twelve thousand or a slip of the finger: money is not taken on a guess. */
-const IS_AMBIGUOUS = /^\D*\d{1,3}[.,]\d{3}\D*$/;
-
 function amountOf(typed: string, payer: Payer): number {
-  if (IS_AMBIGUOUS.test(typed) && minorDigitsOf(payer.currency) < 3) throw new AppError('invalid', 'The amount can be read in two ways.', { amount: ['Write it with its cents, like 12345.00 or 12.34.'] });
+  if (isAmbiguousAmount(typed, payer.currency)) throw new AppError('invalid', 'The amount can be read in two ways.', { amount: ['Write it with its cents, like 12345.00 or 12.34.'] });
   const amountMinor = parseMoney(typed, payer.currency);
   if (amountMinor === null) throw new AppError('invalid', 'The amount was not understood.', { amount: ['Write it like 120 or 120.50.'] });
   if (amountMinor <= 0) throw new AppError('invalid', 'The amount must be more than nothing.', { amount: ['Enter what was paid.'] });

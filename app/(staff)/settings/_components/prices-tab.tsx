@@ -16,6 +16,7 @@ import type { LocalDate } from '@/lib/time';
 import { changePriceSchema } from '@/lib/tuition/price-schema';
 import type { PriceList } from '@/lib/tuition/server/price-list';
 import { savePrice } from '../actions';
+import { signOf } from './currency-sign';
 
 type PricesTabProps = { list: PriceList; school: { locale: string; currency: string }; today: LocalDate };
 
@@ -49,6 +50,3 @@ export function PricesTab({ list, school, today }: PricesTabProps) {
 }
 
 const stateOf = (from: LocalDate, to: LocalDate | null, today: LocalDate) => (from > today ? 'to come' : to !== null && to <= today ? 'ended' : 'in force');
-
-const signOf = ({ locale, currency }: { locale: string; currency: string }): string =>
-  new Intl.NumberFormat(locale, { style: 'currency', currency }).formatToParts(0).find(({ type }) => type === 'currency')?.value ?? currency;

@@ -8,7 +8,7 @@ import { FormError } from '@/components/ui/form-error';
 import { DateField, SelectField, TextField } from '@/components/ui/inputs';
 import type { HouseRuleRow } from '@/db/settings';
 import { formatDate } from '@/lib/format';
-import { HOUSE_RULES, type HouseRuleKey, type HouseRules } from '@/lib/house-rules';
+import { HOUSE_RULES, PLAIN_RULE_KEYS, type HouseRules, type PlainRuleKey } from '@/lib/house-rules';
 import type { LocalDate } from '@/lib/time';
 import { saveRule } from '../actions';
 import { CHOICES, ruleWords } from './rule-words';
@@ -16,11 +16,11 @@ import { CHOICES, ruleWords } from './rule-words';
 type RulesTabProps = { rules: HouseRules; history: readonly HouseRuleRow[]; locale: string; today: LocalDate };
 
 export function RulesTab({ rules, history, locale, today }: RulesTabProps) {
-  const [changing, setChanging] = useState<HouseRuleKey | null>(null);
+  const [changing, setChanging] = useState<PlainRuleKey | null>(null);
   return (
     <>
       <ul className="sheet">
-        {(Object.keys(HOUSE_RULES) as HouseRuleKey[]).map((key) => {
+        {PLAIN_RULE_KEYS.map((key) => {
           const planned = history.filter((row) => row.key === key);
           return (
             <li key={key} className="flex flex-wrap items-center justify-between gap-3 border-b border-rule px-4 py-3 last:border-b-0">
@@ -40,7 +40,7 @@ export function RulesTab({ rules, history, locale, today }: RulesTabProps) {
   );
 }
 
-function ChangeRule({ ruleKey, value, today, onClose }: { ruleKey: HouseRuleKey; value: number | string; today: LocalDate; onClose: () => void }) {
+function ChangeRule({ ruleKey, value, today, onClose }: { ruleKey: PlainRuleKey; value: number | string; today: LocalDate; onClose: () => void }) {
   const [typed, setTyped] = useState(String(value));
   const [validFrom, setValidFrom] = useState(today);
   const [message, setMessage] = useState<string>();

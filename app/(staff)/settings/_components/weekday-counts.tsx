@@ -1,0 +1,35 @@
+import { weekdayCounts, weekdayHint, type Closure, type Term } from '@/lib/calendar/term';
+import type { TermSite } from '@/lib/calendar/server/read-terms';
+import { WEEKDAYS } from '@/lib/calendar/weekday-words';
+
+type WeekdayCountsProps = { term: Term; closures: readonly Closure[]; sites: readonly TermSite[] };
+
+/** How many lessons each weekday has: "Mon 13, Tue 12". Sites that count alike share a line. */
+export function WeekdayCounts({ term, closures, sites }: WeekdayCountsProps) {
+  const lines = new Map<string, { names: string[]; counts: ReturnType<typeof weekdayCounts> }>();
+  for (const site of sites) {
+    const counts = weekdayCounts(term, closures, site);
+    const key = JSON.stringify(counts);
+    const known = lines.get(key);
+    if (known) known.names.push(site.name);
+    else lines.set(key, { names: [site.name], counts });
+  }
+  return (
+    <div className="flex flex-col gap-3">
+      {[...lines.values()].map(({ names, counts }) => (
+        <div key={names.join()}>
+          {lines.size > 1 ? <p className="mb-1 text-small text-ink-3">{names.join(', ')}</p> : null}
+          <dl className="flex flex-wrap gap-1" aria-label={`Lessons on each weekday${lines.size > 1 ? `, ${names.join(', ')}` : ''}`}>
+            {counts.map(({ weekday, lessons }) => (
+              <div key={weekday} className="flex min-w-[44px] flex-col items-center rounded border border-rule px-2 py-1">
+                <dt className="text-small text-ink-3"><abbr title={WEEKDAYS[weekday - 1]} className="no-underline">{WEEKDAYS[weekday - 1]?.slice(0, 3)}</abbr></dt>
+                <dd className="num font-semibold">{lessons}</dd>
+              </div>
+            ))}
+          </dl>
+          <p className="mt-1 text-small text-ink-3">{weekdayHint(counts)}</p>
+        </div>
+      ))}
+    </div>
+  );
+}
