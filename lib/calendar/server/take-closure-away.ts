@@ -2,6 +2,7 @@ import 'server-only';
 import type * as z from 'zod';
 import { recordAudit } from '@/db/audit';
 import { deleteClosure, findClosure, seriesRound } from '@/db/closures';
+import { termOn } from '@/db/terms';
 import { transaction } from '@/db/transaction';
 import { AppError, notFound } from '@/lib/errors';
 import { formatDate, plural } from '@/lib/format';
@@ -21,6 +22,7 @@ export async function takeClosureAway({ closureId }: z.output<typeof closureSche
     const closure = await findClosure(trx, closureId);
     if (!closure) throw notFound('closed day');
     if (closure.kind !== 'planned') throw new AppError('conflict', 'The school closed at short notice that day, and lessons were marked for it. It stays.');
+    if ((await termOn(trx, closure.closedOn))?.state === 'closed') throw new AppError('conflict', 'The term of this day is closed. Its days stay as they were.');
     const round = await seriesRound(trx, closure);
     const lessons = round.reduce((sum, each) => sum + each.lessons, 0);
     if (lessons > 0) {

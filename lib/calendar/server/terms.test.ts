@@ -107,6 +107,8 @@ describe('where lessons are booked', () => {
     await takeClosureAway({ closureId: (await row('2026-11-25')).id }, owner);
     expect(await closedDays()).toContain('2026-11-24');
     expect(await closedDays()).not.toContain('2026-11-25');
+    await db('term').where({ id: 'autumn' }).update({ state: 'closed' });
+    await expect(takeClosureAway({ closureId: (await row('2026-10-12')).id }, owner)).rejects.toMatchObject({ code: 'conflict', message: 'The term of this day is closed. Its days stay as they were.' });
     await expect(takeClosureAway({ closureId: 'gone' }, owner)).rejects.toMatchObject({ code: 'not_found' });
   });
 });

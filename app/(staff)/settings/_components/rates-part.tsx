@@ -1,7 +1,6 @@
 import { Chip } from '@/components/ui/chip';
-import { Sheet } from '@/components/ui/sheet';
 import type { RateLine } from '@/db/pay-rates';
-import { formatDate, formatMoney } from '@/lib/format';
+import { formatDate, formatMoney, plural } from '@/lib/format';
 import { rateWords } from '@/lib/payroll/rate-words';
 import type { RateBook, TeacherRates } from '@/lib/payroll/server/pay-rates';
 import type { LocalDate } from '@/lib/time';
@@ -16,7 +15,7 @@ export function RatesPart({ book, locale, today }: RatesPartProps) {
     <section aria-labelledby="rates" className="mt-8">
       <h2 id="rates" className="mb-3 text-h2">Pay rates</h2>
       <div className="grid items-start gap-4 lg:grid-cols-[minmax(0,1fr)_320px]">
-        <div className="flex min-w-0 flex-col gap-4">
+        <div className="flex min-w-0 flex-col gap-2">
           {book.teachers.map((teacher) => <RatesOfTeacher key={teacher.engagementId} teacher={teacher} locale={locale} today={today} />)}
         </div>
         <RateForm book={book} locale={locale} today={today} />
@@ -30,15 +29,19 @@ function RatesOfTeacher({ teacher: { name, kind, currency, rates }, locale, toda
   const ended = rates.filter((rate) => stateOf(rate, today) === 'ended');
   const lineOf = (rate: RateLine) => <Rate key={rate.id} rate={rate} money={formatMoney({ amountMinor: rate.amountMinor, currency }, locale)} locale={locale} today={today} />;
   return (
-    <Sheet title={name} action={<span className="text-small text-ink-3">{kind}</span>}>
-      {current.length === 0 ? <p className="rounded bg-brass-wash px-3 py-2 text-brass">No rate yet. Until there is one, this teacher’s lessons cannot be paid.</p> : <ul aria-label={`Rates of ${name}`}>{current.map(lineOf)}</ul>}
+    <details className="sheet px-4 py-3">
+      <summary className="cursor-pointer tap">
+        <b>{name}</b> <span className="text-small text-ink-3">{kind}, {current.length === 0 ? null : plural(current.length, 'rate')}</span>
+        {current.length === 0 ? <Chip tone="bad">no rate yet</Chip> : null}
+      </summary>
+      {current.length === 0 ? <p className="mt-2 rounded bg-brass-wash px-3 py-2 text-brass">Until there is a rate, this teacher’s lessons cannot be paid.</p> : <ul aria-label={`Rates of ${name}`} className="mt-2">{current.map(lineOf)}</ul>}
       {ended.length === 0 ? null : (
-        <details className="mt-2">
-          <summary className="cursor-pointer text-small text-ink-3 tap">Earlier rates ({ended.length})</summary>
+        <>
+          <p className="eyebrow mt-3">Earlier rates</p>
           <ul aria-label={`Earlier rates of ${name}`}>{ended.map(lineOf)}</ul>
-        </details>
+        </>
       )}
-    </Sheet>
+    </details>
   );
 }
 

@@ -19,9 +19,9 @@ export function WeekdayCounts({ term, closures, sites }: WeekdayCountsProps) {
       {[...lines.values()].map(({ names, counts }) => (
         <div key={names.join()}>
           {lines.size > 1 ? <p className="mb-1 text-small text-ink-3">{names.join(', ')}</p> : null}
-          <dl className="flex flex-wrap gap-1" aria-label={`Lessons on each weekday${lines.size > 1 ? `, ${names.join(', ')}` : ''}`}>
+          <dl className="grid max-w-[400px] auto-cols-fr grid-flow-col gap-1" aria-label={`Lessons on each weekday${lines.size > 1 ? `, ${names.join(', ')}` : ''}`}>
             {counts.map(({ weekday, lessons }) => (
-              <div key={weekday} className="flex min-w-[44px] flex-col items-center rounded border border-rule px-2 py-1">
+              <div key={weekday} className="flex flex-col items-center rounded border border-rule py-1">
                 <dt className="text-small text-ink-3"><abbr title={WEEKDAYS[weekday - 1]} className="no-underline">{WEEKDAYS[weekday - 1]?.slice(0, 3)}</abbr></dt>
                 <dd className="num font-semibold">{lessons}</dd>
               </div>
