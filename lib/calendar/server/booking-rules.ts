@@ -80,9 +80,8 @@ async function featureClashes(db: Db, { lessonType }: BookingWish, room: Room | 
 async function placeClashes(db: Db, wish: BookingWish): Promise<Clash[]> {
   const closures = await closuresBetween(db, wish.localDate, wish.localDate);
   const clashes: Clash[] = [];
-  if (closedDatesFor(closures, wish.siteId, wish.startMin, wish.lengthMinutes).has(wish.localDate)) {
-    clashes.push({ rule: 'closure', isHard: true, amount: 1, sentence: `The school is closed then: ${closures[0]?.reason ?? 'no teaching'}.` });
-  }
+  const closed = closures.find((closure) => closedDatesFor([closure], wish.siteId, wish.startMin, wish.lengthMinutes).has(wish.localDate));
+  if (closed) clashes.push({ rule: 'closure', isHard: true, amount: 1, sentence: `The school is closed then: ${closed.reason}.` });
   const spans = (await openingSpans(db)).filter(({ siteId, weekday }) => siteId === wish.siteId && weekday === weekdayOf(wish.localDate));
   const end = wish.startMin + wish.lengthMinutes;
   if (!spans.some(({ fromMin, toMin }) => fromMin <= wish.startMin && end <= toMin)) {
