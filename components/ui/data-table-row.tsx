@@ -7,18 +7,20 @@ type BodyRowProps<Row> = {
   row: Row; columns: readonly Column<Row>[]; href: string | undefined; onOpen: (href: string) => void;
   /** One row at a time stands in the order of the Tab key; the arrows move within. */
   isActive: boolean; onActive: () => void;
+  /** On a phone it waits until more is asked for. */
+  isBeyond: boolean;
 };
 
 const isOwnControl = (event: React.SyntheticEvent): boolean => event.target instanceof HTMLElement && event.target.closest('a, button, input, select, textarea, summary, label') !== null;
 
 /** A row of the table; on a phone a card with its heading first. */
-export function BodyRow<Row>({ row, columns, href, onOpen, isActive, onActive }: BodyRowProps<Row>) {
+export function BodyRow<Row>({ row, columns, href, onOpen, isActive, onActive, isBeyond }: BodyRowProps<Row>) {
   const open = (event: React.SyntheticEvent) => {
     if (href && !isOwnControl(event)) onOpen(href);
   };
   return (
     <tr tabIndex={isActive ? 0 : -1} onFocus={onActive} onClick={open} onKeyDown={(event) => (event.key === 'Enter' ? open(event) : moveRowFocus(event))}
-      className={`border-b border-rule last:border-b-0 focus-visible:-outline-offset-2 max-md:flex max-md:flex-col max-md:px-4 max-md:py-3 ${href ? 'cursor-pointer hover:bg-wash/60' : ''}`}>
+      className={`border-b border-rule last:border-b-0 focus-visible:-outline-offset-2 ${isBeyond ? 'max-md:flex max-md:not-print:hidden' : 'max-md:flex'} max-md:flex-col max-md:px-4 max-md:py-3 ${href ? 'cursor-pointer hover:bg-wash/60' : ''}`}>
       {columns.map((column) => (column.isTitle ? <TitleCell key={column.id} row={row} column={column} href={href} /> : <BodyCell key={column.id} row={row} column={column} />))}
     </tr>
   );

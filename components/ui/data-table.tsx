@@ -4,6 +4,7 @@ import { createColumnHelper, useTable, type SortingState } from '@tanstack/react
 import { useRouter } from 'next/navigation';
 import { useMemo, useState, type ReactNode } from 'react';
 import type { ListOffer } from '@/lib/exports/lists';
+import { Button } from './button';
 import { compareValues, tableFeatureSet, type Column } from './data-table-core';
 import { TableHead } from './data-table-head';
 import { BodyRow } from './data-table-row';
@@ -28,11 +29,15 @@ type DataTableProps<Row> = {
   onRetry?: () => void;
 };
 
+/** A phone shows so many cards at first: a list of a whole school is searched there, not scrolled. */
+const ROWS_ON_PHONE = 30;
+
 /** A table that sorts, searches, hides columns, moves by keyboard, and becomes a list of cards on a phone. */
 export function DataTable<Row>({ label, rows, columns, rowKey, rowHref, empty, initialSort, exportOf, tools, footer, state, onRetry }: DataTableProps<Row>) {
   const router = useRouter();
   const [sorting, setSorting] = useState<SortingState>(initialSort ? [{ id: initialSort.id, desc: initialSort.desc ?? false }] : []);
   const [search, setSearch] = useState('');
+  const [onPhone, setOnPhone] = useState(ROWS_ON_PHONE);
   const [activeKey, setActiveKey] = useState<string | null>(null);
   const [visibility, setVisibility] = useState<Record<string, boolean>>(() => Object.fromEntries(columns.filter(({ hidden }) => hidden).map(({ id }) => [id, false])));
   const data = useMemo(() => rows.map((row) => ({ row })), [rows]);
@@ -62,14 +67,15 @@ export function DataTable<Row>({ label, rows, columns, rowKey, rowHref, empty, i
         <table className="w-full border-collapse" aria-label={label}>
           <TableHead columns={shown} sorting={sorting} onSort={setSorting} />
           <tbody className="max-md:block">
-            {tableRows.map(({ original: { row } }) => {
+            {tableRows.map(({ original: { row } }, at) => {
               const key = rowKey(row);
-              return <BodyRow key={key} row={row} columns={shown} href={rowHref?.(row)} onOpen={(href) => router.push(href)} isActive={key === (isActiveShown ? activeKey : firstKey)} onActive={() => setActiveKey(key)} />;
+              return <BodyRow key={key} row={row} columns={shown} href={rowHref?.(row)} onOpen={(href) => router.push(href)} isBeyond={at >= onPhone} isActive={key === (isActiveShown ? activeKey : firstKey)} onActive={() => setActiveKey(key)} />;
             })}
           </tbody>
           {footer ? <tfoot className="max-md:block">{footer}</tfoot> : null}
         </table>
       </div>
+      {tableRows.length > onPhone ? <div className="border-t border-rule p-3 md:hidden"><Button className="w-full" onClick={() => setOnPhone(onPhone + ROWS_ON_PHONE)}>{`Show more of ${tableRows.length}`}</Button></div> : null}
       {tableRows.length === 0 ? <p className="px-4 py-6 text-ink-3">Nothing matches “{search}”.</p> : null}
     </div>
   );
