@@ -15,7 +15,7 @@ const FOLDER = path.resolve(import.meta.dirname, '../../public/tour');
 const MOST_BYTES = 150_000;
 /** The tallest of these that stays below the limit is taken. */
 const SIZES = { desk: { width: 1360, heights: [850, 760, 680, 600] }, phone: { width: 360, heights: [780, 700, 640] } };
-const PEOPLE = { owner: 'ruth@saltmarsh.example.org', desk: 'pat@saltmarsh.example.org', teacher: 'greta@saltmarsh.example.org', guardian: 'noor@family.example.com' };
+const PEOPLE = { owner: 'ruth@saltmarsh.example.org', desk: 'pat@saltmarsh.example.org', teacher: 'greta@saltmarsh.example.org', guardian: 'noor@family.example.com', student: 'ada@family.example.com' };
 
 const LAUNCH = {
   executablePath: '/usr/bin/chromium',
@@ -34,7 +34,9 @@ const firstOf = (list, except = []) => async (page) => {
 const at = (address) => (page) => page.goto(address, { waitUntil: 'networkidle' });
 
 async function hearing(page) {
-  await firstOf('/students')(page);
+  await page.goto('/students', { waitUntil: 'networkidle' });
+  await page.getByRole('link', { name: 'Ada Vale' }).click();
+  await page.waitForURL('**/students/*');
   await page.goto(`/hearings/${new URL(page.url()).pathname.split('/').at(-1)}`, { waitUntil: 'networkidle' });
   await page.getByRole('button', { name: 'Begin the hearing' }).click();
   await page.locator('rect[data-key]').first().waitFor();
@@ -56,6 +58,8 @@ const TOUR = [
   { name: 'guardian-home', who: 'guardian', size: 'phone', open: at('/home') },
   { name: 'guardian-bill', who: 'guardian', size: 'phone', open: firstOf('/bills') },
   { name: 'guardian-progress', who: 'guardian', size: 'phone', open: firstOf('/progress') },
+  { name: 'voicings', who: 'teacher', size: 'desk', open: at('/voicings'), until: 'figure svg' },
+  { name: 'student-practice', who: 'student', size: 'phone', open: firstOf('/practice') },
 ];
 
 async function signIn(page, email) {
