@@ -12,7 +12,7 @@ export default async function RegisterPage() {
   return (
     <>
       <PageHeader title="Register" sub={rows.length === 0 ? 'Every past lesson is marked.' : `${plural(rows.length, 'mark')} missing. Unmarked lessons hold up pay and are never taken as present.`} />
-      <RegisterList rows={rows} locale={context.school.locale} showsTeacher={context.actor.role !== 'teacher'} />
+      <RegisterList rows={rows} locale={context.school.locale} showsTeacher={context.actor.role !== 'teacher' || context.actor.isLead} />
     </>
   );
 }

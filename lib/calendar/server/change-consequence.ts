@@ -9,7 +9,7 @@ import { formatDate } from '@/lib/format';
 import type { Context } from '@/lib/server/context';
 import { newId } from '@/lib/server/ids';
 import { assertCan } from '@/policies/ability';
-import { ATTENDANCE_WORDS } from '../attendance';
+import { ATTENDANCE_WORDS, isTaught } from '../attendance';
 import { consequenceWords } from '../consequence-words';
 import type { changeConsequenceSchema } from '../consequence-schema';
 import { consequencesOn } from '../consequences';
@@ -29,7 +29,9 @@ export async function changeConsequence(change: Change, context: Context): Promi
   const { db, today, school } = context;
   assertCan(context.ability, 'update', 'Settings', {});
   const { mark, consequence, validFrom } = change;
-  if (validFrom < today) throw new AppError('invalid', 'A rule changes from today on or later, never backwards.', { validFrom: ['Choose today or a later day.'] });
+  // Today's lessons may be marked and credited already; the table of their day stays.
+  if (validFrom <= today) throw new AppError('invalid', 'It changes from tomorrow on or later: lessons of today may be marked already.', { validFrom: ['Choose a day after today.'] });
+  if (isTaught(mark) && consequence.credit !== 'none') throw new AppError('invalid', `A lesson that was taught (“${ATTENDANCE_WORDS[mark]}”) gives no make-up credit: nothing was missed.`, { credit: ['Choose no credit.'] });
   await transaction(db, async (trx) => {
     const before = await datedConsequences(trx);
     await setFrom(trx, change, before, context);

@@ -94,7 +94,8 @@ describe('changing the table', () => {
     expect((await readConsequences(owner)).map(({ table }) => table)).toEqual([CONSEQUENCES]);
   });
   it('never backwards', async () => {
-    await expect(change({ validFrom: '2026-11-16' })).rejects.toMatchObject({ code: 'invalid', fields: { validFrom: ['Choose today or a later day.'] } });
+    for (const validFrom of ['2026-11-16', '2026-11-17']) await expect(change({ validFrom })).rejects.toMatchObject({ code: 'invalid', fields: { validFrom: ['Choose a day after today.'] } });
+    await expect(change({ mark: 'present', consequence: { ...OWN, credit: 'capped' } })).rejects.toMatchObject({ code: 'invalid', fields: { credit: ['Choose no credit.'] } });
     expect(await readConsequences(owner)).toEqual([]);
   });
   it('a stored table that lacks a mark is refused loudly wherever a lesson is judged', async () => {

@@ -10,7 +10,7 @@ import { ATTENDANCE_WORDS, type MarkedAttendance } from '@/lib/calendar/attendan
 import { consequenceFormSchema } from '@/lib/calendar/consequence-schema';
 import { CREDIT_WORDS } from '@/lib/calendar/consequence-words';
 import { consequencesOn, type DatedConsequences } from '@/lib/calendar/consequences';
-import type { LocalDate } from '@/lib/time';
+import { addDays, type LocalDate } from '@/lib/time';
 import { saveConsequence } from '../actions';
 
 type ChangeConsequenceProps = { mark: MarkedAttendance; versions: readonly DatedConsequences[]; today: LocalDate; onClose: () => void };
@@ -21,7 +21,7 @@ export function ChangeConsequence({ mark, versions, today, onClose }: ChangeCons
   const now = consequencesOn(versions, today)[mark];
   const form = useActionForm({
     schema: consequenceFormSchema, send: saveConsequence, onDone: () => { toast.success('The rule is changed.'); onClose(); },
-    defaultValues: { mark, charged: now.charged, credit: now.credit, employee: String(now.payBp.employee / 100), contractor: String(now.payBp.contractor / 100), drawsPackage: now.drawsPackage, validFrom: today },
+    defaultValues: { mark, charged: now.charged, credit: now.credit, employee: String(now.payBp.employee / 100), contractor: String(now.payBp.contractor / 100), drawsPackage: now.drawsPackage, validFrom: addDays(today, 1) },
   });
   const { errors, isSubmitting } = form.formState;
   return (
